@@ -115,7 +115,11 @@ describe('layers', () => {
         importsOf(file)
           .map(({ target }) => resolveImport(file, target))
           .filter((path): path is string => path !== null)
-          .filter((path) => floorOf(path) > floorOf(file) || (floorOf(path) === floorOf(file) && roomOf(path) !== roomOf(file) && floorOf(file) > 0))
+          .filter(
+            (path) =>
+              floorOf(path) > floorOf(file) ||
+              (floorOf(path) === floorOf(file) && roomOf(path) !== roomOf(file) && floorOf(file) > 0),
+          )
           .map((path) => `${file} → ${path}`),
       );
     expect(wrong).toEqual([]);

@@ -28,8 +28,25 @@ export interface ModelPreview {
   /** Normal form that parses back to the same model. */
   normalText: string;
   normalLatex: string;
-  fields: { name: string; latex: string; mathml: string; kind: 'real' | 'complex'; mass: string; dimension: string; inferred: boolean }[];
-  parameters: { name: string; latex: string; mathml: string; role: 'coupling' | 'propagator' | 'both'; dimension: string; renormalisability: string; weight: string; loops: number }[];
+  fields: {
+    name: string;
+    latex: string;
+    mathml: string;
+    kind: 'real' | 'complex';
+    mass: string;
+    dimension: string;
+    inferred: boolean;
+  }[];
+  parameters: {
+    name: string;
+    latex: string;
+    mathml: string;
+    role: 'coupling' | 'propagator' | 'both';
+    dimension: string;
+    renormalisability: string;
+    weight: string;
+    loops: number;
+  }[];
   rules: RulesDTO & { mathml: { propagators: string[]; vertices: string[] } };
   checks: { code: string; title: string; verdict: 'good' | 'note' | 'caution' | 'bad'; text: string }[];
   notes: { code: string; message: string; start: number | null; end: number | null }[];

@@ -1,4 +1,4 @@
-import type { ErrorCode } from '#engine/errors.ts';
+import { type ErrorCode, InputError, LimitError } from '#engine/errors.ts';
 
 /** Codes of refusals that arise above the engine. */
 export type BoundaryCode =
@@ -54,3 +54,31 @@ export const STATUS: Record<AnyCode, number> = {
   interrupted: 503,
   defect: 500,
 };
+
+/** A refusal that arises above the engine, carrying the one error object. */
+export class Refusal extends Error {
+  override readonly name = 'Refusal';
+  constructor(readonly error: ErrorObject) {
+    super(error.message);
+  }
+}
+
+/** The error object of anything thrown, or null when it is a defect of the program. */
+export function errorObject(thrown: unknown): ErrorObject | null {
+  if (thrown instanceof Refusal) return thrown.error;
+  if (!(thrown instanceof InputError || thrown instanceof LimitError)) return null;
+  const { code, message, place } = thrown;
+  const suggestion = thrown instanceof InputError ? thrown.suggestion : null;
+  return {
+    code,
+    message,
+    line: place?.line ?? null,
+    column: place?.column ?? null,
+    ...(place ? { length: place.length } : {}),
+    ...(suggestion === null ? {} : { suggestion }),
+  };
+}
+
+/** The command line's exit code: 2 bad input, 3 over a limit, 1 a defect. */
+export const exitCode = (error: ErrorObject | null): 1 | 2 | 3 =>
+  error === null ? 1 : error.code === 'limit' || error.code === 'too-large' ? 3 : 2;

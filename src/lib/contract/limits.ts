@@ -25,6 +25,7 @@ export const LIMITS = {
   vertices: 24,
   diagramLines: 64,
   bodyBytes: 1_000_000,
+  jsonDepth: 64,
   /** Visitors: estimated classes, seconds, runs an hour and address, hours a result is kept. */
   visitor: { classes: 2_000, seconds: 5, perHour: 20, keepHours: 24 },
   /** Signed-in people: classes of one expansion, seconds, running jobs. */

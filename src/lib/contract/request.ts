@@ -35,11 +35,17 @@ const modelTerm = z.strictObject({
   coefficient: z.string().min(1).max(2000),
   fields: z.array(name).max(LIMITS.fieldDegree * 2),
   /** Contracted derivative pairs [i, j] of 1-based positions in `fields`; [i, i] is a d'Alembertian. */
-  derivatives: z.array(z.tuple([z.number().int().min(1), z.number().int().min(1)])).max(64).default([]),
+  derivatives: z
+    .array(z.tuple([z.number().int().min(1), z.number().int().min(1)]))
+    .max(64)
+    .default([]),
 });
 
 const modelShape = {
-  lagrangian: z.string().max(LIMITS.lagrangianLength * 4).optional(),
+  lagrangian: z
+    .string()
+    .max(LIMITS.lagrangianLength * 4)
+    .optional(),
   model: z.strictObject({ terms: z.array(modelTerm).max(LIMITS.terms) }).optional(),
   fields: z.record(name, fieldOverride).default({}),
   parameters: z.record(name, parameterOverride).default({}),
@@ -69,7 +75,10 @@ export const expansionRequestSchema = z
     through: z.boolean().default(false),
     keep: z.enum(keepValues).default('connected'),
     drop: z.array(z.enum(dropValues)).max(3).default([]),
-    with: z.array(z.enum(['integral'])).max(1).default([]),
+    with: z
+      .array(z.enum(['integral']))
+      .max(1)
+      .default([]),
   })
   .refine(oneSource, oneSourceMessage);
 export type ExpansionRequest = z.output<typeof expansionRequestSchema>;
@@ -80,9 +89,15 @@ export const diagramRequestSchema = z.strictObject({
   legs: z.array(z.number().int().min(1)).max(LIMITS.legs).default([]),
   fields: z.strictObject({ lines: z.array(name), legs: z.array(name) }).optional(),
   kinds: z.array(name).optional(),
-  lagrangian: z.string().max(LIMITS.lagrangianLength * 4).optional(),
+  lagrangian: z
+    .string()
+    .max(LIMITS.lagrangianLength * 4)
+    .optional(),
   model: z.union([z.string(), z.strictObject({ terms: z.array(modelTerm) })]).optional(),
   conventions: conventionsSchema.optional(),
-  with: z.array(z.enum(['integral'])).max(1).default([]),
+  with: z
+    .array(z.enum(['integral']))
+    .max(1)
+    .default([]),
 });
 export type DiagramRequest = z.output<typeof diagramRequestSchema>;
