@@ -1,0 +1,167 @@
+import { InputError, LimitError } from '../errors.ts';
+import { add, compare, divide, multiply, type Rational, rational, subtract, ZERO } from '../exact/rational.ts';
+import type { Content, CountingRequest } from '../graph/theory.ts';
+
+/** Vertex contents that one ledger may look at. */
+export const LEDGER_CONTENTS = 250_000;
+
+/** Σ_k weights[k] n_k ≤ bound. */
+interface Inequality {
+  readonly weights: readonly Rational[];
+  readonly bound: Rational;
+}
+
+const valence = (kind: readonly number[]): number => kind.reduce((sum, n) => sum + n, 0);
+
+/**
+ * The vertex contents that the order of a request admits, in lexicographic order, those of no balanced half-lines left out.
+ *
+ * Every order is a system of linear inequalities in n ≥ 0. `powers` states it as it stands. `loops`: a connected part with k-valent
+ * vertices and E points on lines has 2(L − 1) + E = Σ n (k − 2), hence with L + Σ ℓ n = B: Σ n (k − 2 + 2ℓ) = 2(B − 1) + E.
+ * For `all` and `normalised` loops add over C components and E′ ≤ E points are joined to vertices: the left side is 2(B − C) + E′, so it is
+ * at most 2(B − 1) + E once there is a vertex; which part of such a content belongs to B is for the sum over components to say.
+ * Under 1PI a one-point vertex occurs only as the single bare vertex.
+ *
+ * @throws InputError infinite-order when a kind stays unbounded; LimitError beyond LEDGER_CONTENTS steps.
+ */
+export function admittedContents(request: CountingRequest): Content[] {
+  const { theory, keep, legs } = request;
+  const usable = theory.kinds.map((kind) => keep !== '1PI' || valence(kind) > 1);
+  const system = inequalities(request);
+  const upper = upperBounds(system, usable);
+  const found = new Map<string, Content>();
+  const note = (content: Content): void => {
+    if (isBalanced(request, content)) found.set(content.join(), content);
+  };
+  enumerate(system, upper, note);
+  const none = new Array<number>(theory.kinds.length).fill(0);
+  if (request.order.by === 'loops' && (keep === 'all' || keep === 'normalised')) note(none);
+  if (keep === '1PI' && legs.length === 1)
+    theory.kinds.forEach((kind, k) => {
+      const content = none.map((_, i) => (i === k ? 1 : 0));
+      if (valence(kind) === 1 && satisfies(system, content)) note(content);
+    });
+  return [...found.values()];
+}
+
+function inequalities(request: CountingRequest): Inequality[] {
+  const { order, theory, legs, keep } = request;
+  if (order.by === 'loops') {
+    const weights = theory.kinds.map((kind, k) => rational(valence(kind) - 2 + 2 * order.kindLoops[k]!));
+    const bound = rational(2 * (order.bound - 1) + legs.length);
+    return pair(weights, bound, order.through || keep === 'all' || keep === 'normalised');
+  }
+  return order.bound.flatMap((bound, c) =>
+    pair(
+      theory.kinds.map((_, k) => order.weights[k]![c]!),
+      bound,
+      order.through,
+    ),
+  );
+}
+
+function pair(weights: readonly Rational[], bound: Rational, through: boolean): Inequality[] {
+  const below = { weights, bound };
+  if (through) return [below];
+  return [below, { weights: weights.map((w) => subtract(ZERO, w)), bound: subtract(ZERO, bound) }];
+}
+
+/** Largest n of each kind by repeated tightening of every inequality; null while unbounded. */
+function upperBounds(system: readonly Inequality[], usable: readonly boolean[]): number[] {
+  const upper = usable.map((can): number | null => (can ? null : 0));
+  for (let round = 0, changed = true; changed && round < 200; round++) {
+    changed = false;
+    for (const inequality of system) {
+      for (let k = 0; k < upper.length; k++) {
+        const most = largest(inequality, upper, k);
+        if (most === null || (upper[k] !== null && upper[k]! <= most)) continue;
+        upper[k] = most;
+        changed = true;
+      }
+    }
+  }
+  upper.forEach((bound, k) => {
+    if (bound === null)
+      throw new InputError('infinite-order', `Nothing in the order bounds the number of vertices of kind ${k + 1}.`);
+  });
+  return upper as number[];
+}
+
+/** What one inequality says about n_k; null when nothing. */
+function largest({ weights, bound }: Inequality, upper: readonly (number | null)[], k: number): number | null {
+  const own = weights[k]!;
+  if (compare(own, ZERO) <= 0) return null;
+  let room = bound;
+  for (let j = 0; j < weights.length; j++) {
+    if (j === k || compare(weights[j]!, ZERO) >= 0) continue;
+    if (upper[j] === null) return null;
+    room = subtract(room, multiply(weights[j]!, rational(upper[j]!)));
+  }
+  if (compare(room, ZERO) < 0) return 0;
+  const quotient = divide(room, own);
+  return Number(quotient.num / quotient.den);
+}
+
+function satisfies(system: readonly Inequality[], content: Content): boolean {
+  return system.every(({ weights, bound }) => {
+    let total = ZERO;
+    content.forEach((n, k) => {
+      if (n > 0) total = add(total, multiply(weights[k]!, rational(n)));
+    });
+    return compare(total, bound) <= 0;
+  });
+}
+
+/** Depth-first over n_1, n_2, …; a branch is left as soon as an inequality cannot be met by what remains. */
+function enumerate(system: readonly Inequality[], upper: readonly number[], note: (content: Content) => void): void {
+  const scaled = system.map(({ weights, bound }) => toIntegers([...weights, bound]));
+  const least = scaled.map((row) => {
+    const rest = new Array<bigint>(upper.length + 1).fill(0n);
+    for (let k = upper.length - 1; k >= 0; k--)
+      rest[k] = rest[k + 1]! + (row[k]! < 0n ? row[k]! * BigInt(upper[k]!) : 0n);
+    return rest;
+  });
+  const content = new Array<number>(upper.length).fill(0);
+  let steps = 0;
+  const descend = (k: number, room: readonly bigint[]): void => {
+    if (++steps > LEDGER_CONTENTS)
+      throw new LimitError(
+        `This order admits more than ${LEDGER_CONTENTS} vertex contents, which is the bound of the independent count.`,
+        LEDGER_CONTENTS,
+      );
+    if (room.some((left, c) => left < least[c]![k]!)) return;
+    if (k === upper.length) {
+      note([...content]);
+      return;
+    }
+    for (let n = 0; n <= upper[k]!; n++) {
+      content[k] = n;
+      descend(
+        k + 1,
+        room.map((left, c) => left - scaled[c]![k]! * BigInt(n)),
+      );
+    }
+    content[k] = 0;
+  };
+  descend(
+    0,
+    scaled.map((row) => row[upper.length]!),
+  );
+}
+
+function toIntegers(row: readonly Rational[]): bigint[] {
+  const common = row.reduce((product, { den }) => (product % den === 0n ? product : product * den), 1n);
+  return row.map(({ num, den }) => (num * common) / den);
+}
+
+/** Every real field needs an even number of half-lines, every complex field as many φ as φ*. */
+function isBalanced({ theory, legs }: CountingRequest, content: Content): boolean {
+  const total = theory.partner.map((_, h) => legs.filter((type) => type === h).length);
+  content.forEach((n, k) => {
+    if (n === 0) return;
+    theory.kinds[k]!.forEach((number, h) => {
+      total[h]! += n * number;
+    });
+  });
+  return theory.partner.every((partner, h) => (partner === h ? total[h]! % 2 === 0 : total[h] === total[partner]));
+}
