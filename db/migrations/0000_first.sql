@@ -162,6 +162,7 @@ CREATE TABLE `jobs` (
 	`attempts` integer DEFAULT 0 NOT NULL,
 	`seconds` integer NOT NULL,
 	`classes` integer NOT NULL,
+	`estimated` integer,
 	`created_at` text NOT NULL,
 	`started_at` text,
 	`finished_at` text,

@@ -121,8 +121,11 @@ export const jobs = sqliteTable(
       enum: ['queued', 'running', 'complete', 'failed', 'cancelled', 'interrupted'],
     }).notNull(),
     attempts: integer('attempts').notNull().default(0),
+    /** Limits of this run: seconds of wall clock, number of classes. */
     seconds: integer('seconds').notNull(),
     classes: integer('classes').notNull(),
+    /** Classes expected, for the progress bar; null when it could not be told. */
+    estimated: integer('estimated'),
     createdAt: text('created_at').notNull(),
     startedAt: text('started_at'),
     finishedAt: text('finished_at'),

@@ -1,0 +1,1 @@
+export { prepare, runExpansion } from '../lib/server/engine-interim.ts';
