@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { rational, ZERO } from '#engine/exact/rational.ts';
-import type { CountingRequest, Drop, Keep, Order, Theory } from '#engine/graph/theory.ts';
+import type { CountingRequest, Drop, Keep, Theory } from '#engine/graph/theory.ts';
 import { divisor, independentSums } from '#engine/ledger/independent.ts';
 import { allPairings, isDropped, isKept, loopNumber } from './contractions.ts';
+import { byLoops, exactly, real } from './requests.ts';
 
 /** The definitions of physics, applied to every contraction: no source needed beyond them. */
 const keeps: readonly Keep[] = ['all', 'normalised', 'connected', '1PI'];
@@ -17,15 +18,6 @@ const drops: readonly (readonly Drop[])[] = [
   ['self-contractions', 'tadpoles', 'scaleless'],
 ];
 
-/** One power per kind, so that a request names its content. */
-const exactly = (content: readonly number[]): Order => ({
-  by: 'powers',
-  weights: content.map((_, k) => content.map((_, c) => rational(k === c ? 1 : 0))),
-  bound: content.map((n) => rational(n)),
-  through: false,
-});
-
-const real = (...kinds: number[]): Theory => ({ partner: [0], kinds: kinds.map((k) => [k]) });
 const portal: Theory = {
   partner: [0, 1],
   kinds: [
@@ -125,7 +117,7 @@ describe('every contraction of a small case', () => {
 });
 
 describe('every contraction, by loops', () => {
-  const byLoops: [string, Theory, number[], number[][]][] = [
+  const loopCases: [string, Theory, number[], number[][]][] = [
     ['φ³', real(3), [0, 0], [[0], [2]]],
     [
       'φ³ + φ⁴',
@@ -157,7 +149,7 @@ describe('every contraction, by loops', () => {
       ],
     ],
   ];
-  it.each(byLoops)('%s', (_, theory, legs, contents) => {
+  it.each(loopCases)('%s', (_, theory, legs, contents) => {
     for (const keep of keeps) {
       for (const drop of [[], ['tadpoles'], ['scaleless']] as const) {
         for (const [bound, through] of [
@@ -167,8 +159,7 @@ describe('every contraction, by loops', () => {
           [1, true],
           [2, true],
         ] as const) {
-          const order: Order = { by: 'loops', kindLoops: theory.kinds.map(() => 0), bound, through };
-          const sums = independentSums({ theory, legs, order, keep, drop });
+          const sums = independentSums({ theory, legs, order: byLoops(theory, bound, through), keep, drop });
           const rows = sums.state === 'proved' ? sums.rows : [];
           for (const content of contents) {
             const expected = allPairings(theory, legs, content)

@@ -134,18 +134,20 @@ export class SeriesIndex {
     const result: MutableSplits = { left: [], right: [], ways: [] };
     const left = new Array<number>(this.dimension).fill(0);
     const right = [...vector];
-    const descend = (i: number, ways: bigint): void => {
-      if (i === this.dimension) {
+    const support = vector.flatMap((entry, i) => (entry > 0 ? [i] : []));
+    const descend = (depth: number, ways: bigint): void => {
+      if (depth === support.length) {
         result.left.push(this.id(left));
         result.right.push(this.id(right));
         result.ways.push(ways);
         return;
       }
+      const i = support[depth]!;
       const whole = vector[i]!;
       for (let k = 0; k <= whole; k++) {
         left[i] = k;
         right[i] = whole - k;
-        descend(i + 1, k === 0 || k === whole ? ways : ways * binomial(whole, k));
+        descend(depth + 1, k === 0 || k === whole ? ways : ways * binomial(whole, k));
       }
       left[i] = 0;
       right[i] = whole;

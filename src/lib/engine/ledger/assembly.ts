@@ -29,7 +29,7 @@ export function assemble(
     for (let i = 0; i < outer.left.length; i++) {
       const part = outer.left[i]!;
       const inner = g === legs.zero ? space.legSplits(g, part) : space.rootedLegSplits(g, part);
-      space.spend(inner.left.length);
+      space.spend(inner.left.length + 1);
       for (let j = 0; j < inner.left.length; j++) {
         const points = inner.left[j]!;
         const sum = component(part, points);

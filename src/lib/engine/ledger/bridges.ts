@@ -1,6 +1,6 @@
 import { accumulate, type IntegerPolynomial } from '../exact/polynomial.ts';
 import type { GeneratingFunctions } from './generating.ts';
-import type { CountingSpace } from './space.ts';
+import { type CountingSpace, NO_SPLITS } from './space.ts';
 
 /**
  * Removal of bridges from the connected sums: the Legendre transform at φ = 0, and ⟨φ⟩ = 0 by choice of the source.
@@ -34,7 +34,7 @@ export class BridgeRemoval {
     let value = this.plantedValues.get(key);
     if (value === undefined) {
       value = 0n;
-      const outer = contents.splits(m);
+      const outer = this.space.linked(m, points) ? contents.splits(m) : NO_SPLITS;
       for (let i = 0; i < outer.left.length; i++)
         value += outer.ways[i]! * this.withBranches(outer.left[i]!, outer.right[i]!, a, legs.unit(h));
       this.plantedValues.set(key, value);
@@ -44,7 +44,7 @@ export class BridgeRemoval {
 
   /** G: one-particle irreducible sums. The part that holds the root vertex, times its branches (∂G/∂c = ∂U/∂c at x = y − P). */
   irreducible(m: number, a: number): bigint {
-    if (!this.space.balanced(m, a)) return 0n;
+    if (m === this.space.contents.zero || !this.space.balanced(m, a) || !this.space.linked(m, a)) return 0n;
     const { contents, legs } = this.space;
     const outer = contents.rooted(m);
     let value = 0n;
@@ -59,7 +59,7 @@ export class BridgeRemoval {
    * With one point it equals P(0); needs at least one.
    */
   withoutTadpoles(m: number, a: number): bigint {
-    if (!this.space.balanced(m, a)) return 0n;
+    if (m === this.space.contents.zero || !this.space.balanced(m, a) || !this.space.linked(m, a)) return 0n;
     const { contents, legs } = this.space;
     const outer = contents.splits(m);
     let value = 0n;

@@ -2,8 +2,10 @@ import { InputError, LimitError } from '../errors.ts';
 import { add, compare, divide, multiply, type Rational, rational, subtract, ZERO } from '../exact/rational.ts';
 import type { Content, CountingRequest } from '../graph/theory.ts';
 
-/** Vertex contents that one ledger may look at. */
-export const LEDGER_CONTENTS = 250_000;
+/** Vertex contents that one ledger may sum. */
+export const LEDGER_CONTENTS = 100_000;
+/** Partial contents that the search for them may visit. */
+const SEARCH_STEPS = 4_000_000;
 
 /** Σ_k weights[k] n_k ≤ bound. */
 interface Inequality {
@@ -22,7 +24,7 @@ const valence = (kind: readonly number[]): number => kind.reduce((sum, n) => sum
  * at most 2(B − 1) + E once there is a vertex; which part of such a content belongs to B is for the sum over components to say.
  * Under 1PI a one-point vertex occurs only as the single bare vertex.
  *
- * @throws InputError infinite-order when a kind stays unbounded; LimitError beyond LEDGER_CONTENTS steps.
+ * @throws InputError infinite-order when a kind stays unbounded; LimitError beyond LEDGER_CONTENTS of them.
  */
 export function admittedContents(request: CountingRequest): Content[] {
   const { theory, keep, legs } = request;
@@ -30,8 +32,10 @@ export function admittedContents(request: CountingRequest): Content[] {
   const system = inequalities(request);
   const upper = upperBounds(system, usable);
   const found = new Map<string, Content>();
-  const note = (content: Content): void => {
-    if (isBalanced(request, content)) found.set(content.join(), content);
+  const note = (content: Content): boolean => {
+    const balanced = isBalanced(request, content);
+    if (balanced) found.set(content.join(), content);
+    return balanced;
   };
   enumerate(system, upper, note);
   const none = new Array<number>(theory.kinds.length).fill(0);
@@ -113,7 +117,7 @@ function satisfies(system: readonly Inequality[], content: Content): boolean {
 }
 
 /** Depth-first over n_1, n_2, …; a branch is left as soon as an inequality cannot be met by what remains. */
-function enumerate(system: readonly Inequality[], upper: readonly number[], note: (content: Content) => void): void {
+function enumerate(system: readonly Inequality[], upper: readonly number[], note: (content: Content) => boolean): void {
   const scaled = system.map(({ weights, bound }) => toIntegers([...weights, bound]));
   const least = scaled.map((row) => {
     const rest = new Array<bigint>(upper.length + 1).fill(0n);
@@ -123,15 +127,12 @@ function enumerate(system: readonly Inequality[], upper: readonly number[], note
   });
   const content = new Array<number>(upper.length).fill(0);
   let steps = 0;
+  let contents = 0;
   const descend = (k: number, room: readonly bigint[]): void => {
-    if (++steps > LEDGER_CONTENTS)
-      throw new LimitError(
-        `This order admits more than ${LEDGER_CONTENTS} vertex contents, which is the bound of the independent count.`,
-        LEDGER_CONTENTS,
-      );
     if (room.some((left, c) => left < least[c]![k]!)) return;
+    if (++steps > SEARCH_STEPS) throw tooMany();
     if (k === upper.length) {
-      note([...content]);
+      if (note([...content]) && ++contents > LEDGER_CONTENTS) throw tooMany();
       return;
     }
     for (let n = 0; n <= upper[k]!; n++) {
@@ -148,6 +149,12 @@ function enumerate(system: readonly Inequality[], upper: readonly number[], note
     scaled.map((row) => row[upper.length]!),
   );
 }
+
+const tooMany = (): LimitError =>
+  new LimitError(
+    `This order admits more than ${LEDGER_CONTENTS} vertex contents, which is the bound of the independent count.`,
+    LEDGER_CONTENTS,
+  );
 
 function toIntegers(row: readonly Rational[]): bigint[] {
   const common = row.reduce((product, { den }) => (product % den === 0n ? product : product * den), 1n);

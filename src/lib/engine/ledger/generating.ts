@@ -49,6 +49,14 @@ export class GeneratingFunctions {
     const key = this.space.cell(m, g);
     const known = this.connecteds.get(key);
     if (known !== undefined) return known;
+    let value = 0n;
+    if (this.space.linked(m, g)) value = this.logarithm(m, g);
+    this.connecteds.set(key, value);
+    return value;
+  }
+
+  private logarithm(m: number, g: number): bigint {
+    const { contents } = this.space;
     let value = this.full(m, g);
     const outer = contents.rooted(m);
     for (let i = 0; i < outer.left.length; i++) {
@@ -65,7 +73,6 @@ export class GeneratingFunctions {
       }
       if (sum !== 0n) value -= outer.ways[i]! * sum;
     }
-    this.connecteds.set(key, value);
     return value;
   }
 

@@ -81,9 +81,9 @@ export class CoreVertices {
   }
 
   private remainder(m: number, vertices: IntegerPolynomial): IntegerPolynomial {
-    const { contents } = this.space;
+    const { contents, legs } = this.space;
     const value = new Map(vertices);
-    if (m === contents.zero) return value;
+    if (m === contents.zero || !this.space.linked(m, legs.zero)) return value;
     const outer = contents.splits(m);
     for (let i = 0; i < outer.left.length; i++) {
       const inside = outer.left[i]!;
