@@ -8,6 +8,8 @@ declare namespace App {
     user: import('#server/viewer.ts').SessionUser | null;
     /** Also in the response header X-Request-Id and in the log. */
     requestId: string;
+    /** The peer's address as our own server trusts it; absent under the development server. */
+    address?: string;
     /** From the cookie "theme"; system when unset. Put it on <html data-theme>. */
     theme: 'system' | 'light' | 'dark';
     /** Gives this browser a visitor cookie when it has none, and updates viewer.visitor. */

@@ -57,10 +57,10 @@ export function ensureDependencies() {
  * Bundles a TypeScript entry for Node into dist/<out> when its sources changed, and returns the bundle's path.
  * Packages stay outside the bundle unless `inline` is set (the command line inlines them, to start fast).
  */
-export async function ensureBundle(entry, out, { inline = false } = {}) {
+export async function ensureBundle(entry, out, { inline = false, sources = [] } = {}) {
   ensureDependencies();
   const target = join(root, 'dist', out);
-  const wanted = hashOf(['src/lib', 'src/jobs', entry, 'package-lock.json', 'scripts/lib/provision.mjs']);
+  const wanted = hashOf(['src/lib', 'src/jobs', ...sources, entry, 'package-lock.json', 'scripts/lib/provision.mjs']);
   const stamp = `bundle-${out.replace(/[^a-z0-9]+/gi, '-')}`;
   if (existsSync(target) && stampMatches(stamp, wanted)) return target;
   const { build } = await import(pathToFileURL(join(root, 'node_modules/esbuild/lib/main.js')).href);
