@@ -3,6 +3,7 @@ import type { APIContext, MiddlewareHandler } from 'astro';
 import { userOf } from '#server/accounts.ts';
 import { type CookieToSet, sessionOf } from '#server/auth.ts';
 import { problem, problemOf } from '#server/endpoint.ts';
+import { keepHouse } from '#server/housekeeping.ts';
 import { newSecret, sha256 } from '#server/ids.ts';
 import { knownOrigins, mayChange } from '#server/origin.ts';
 import { runtime } from '#server/runtime.ts';
@@ -69,6 +70,7 @@ export const onRequest: MiddlewareHandler = async (context, next) => {
   const { locals } = context;
   locals.requestId ??= randomUUID();
   const { config, rates } = runtime();
+  keepHouse();
   if (!mayChange(context.request, knownOrigins(config))) return refuseCrossSite(context, locals.requestId);
   const address = addressOf(context);
   try {
@@ -82,6 +84,8 @@ export const onRequest: MiddlewareHandler = async (context, next) => {
   locals.theme = themeOf(context);
   locals.becomeVisitor = () => visitorCookie(context, locals.viewer);
   const response = await next();
+  if (response.headers.get('content-type') === 'text/html')
+    response.headers.set('content-type', 'text/html; charset=utf-8');
   if (!response.headers.has('cache-control'))
     response.headers.set('cache-control', locals.user || isApi(context) ? 'private, no-store' : 'private, no-cache');
   return response;

@@ -73,7 +73,7 @@ export function previewModel(input: ModelInput): ModelPreview {
     notes: [],
   };
 }
-const countOf = (request: ExpansionRequest): number => Number((request.order as { total?: number }).total ?? 3);
+const countOf = (request: ExpansionRequest): number => { const { total } = request.order as { total?: number }; return total === undefined ? 3 : 4 ** Number(total); };
 export function prepare(request: ExpansionRequest): Prepared {
   if (!request.lagrangian?.includes('phi'))
     throw new InputError('syntax', 'interim', { line: 1, column: 1, length: 1 });

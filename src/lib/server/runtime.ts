@@ -19,7 +19,8 @@ export interface Runtime {
 const KEY = Symbol.for('wickwork.runtime');
 const shelf = globalThis as { [KEY]?: Runtime };
 
-export function startRuntime(config: Config): Runtime {
+/** @param options.recover whether to take up the jobs that a crash left (the seed does not: the server will). */
+export function startRuntime(config: Config, options: { recover: boolean } = { recover: true }): Runtime {
   const log = makeLog(config.logLevel);
   const db = openDatabase(config.databaseFile);
   const jobs = new Jobs(db, log, {
@@ -42,7 +43,7 @@ export function startRuntime(config: Config): Runtime {
     },
   };
   shelf[KEY] = value;
-  jobs.recover();
+  if (options.recover) jobs.recover();
   return value;
 }
 
