@@ -35,7 +35,11 @@ export class SeriesIndex {
   private readonly rootedSplits = new Map<number, Splits>();
   private readonly sums = new Map<number, number>();
 
-  constructor(readonly dimension: number) {
+  /** `charge` hears the number of splits of an index before they are listed, and may throw to forbid it. */
+  constructor(
+    readonly dimension: number,
+    private readonly charge: (splits: number) => void = () => {},
+  ) {
     this.id(new Array<number>(dimension).fill(0));
   }
 
@@ -131,6 +135,7 @@ export class SeriesIndex {
   }
 
   private enumerate(vector: readonly number[]): Splits {
+    this.charge(vector.reduce((product, entry) => product * (entry + 1), 1));
     const result: MutableSplits = { left: [], right: [], ways: [] };
     const left = new Array<number>(this.dimension).fill(0);
     const right = [...vector];

@@ -13,8 +13,7 @@ import { type CountingSpace, NO_SPLITS } from './space.ts';
  *
  * `planted` is P, `forest` is e^{−P·∂}, as exact integers per content m and external points a (see GeneratingFunctions).
  * Cost of one coefficient: one pass over the splits of (m, a) times the numbers of branches that occur.
- * @see Legendre transform as removal of one-particle reducible parts: common practice (J. Zinn-Justin, Quantum Field Theory and
- *   Critical Phenomena, ch. "Generating functionals", from memory).
+ * That the Legendre transform removes one-particle reducible parts is common practice; the inversion above is worked out here.
  */
 export class BridgeRemoval {
   private readonly plantedValues = new Map<number, bigint>();

@@ -4,8 +4,10 @@ import type { Content, CountingRequest } from '../graph/theory.ts';
 
 /** Vertex contents that one ledger may sum. */
 export const LEDGER_CONTENTS = 100_000;
-/** Partial contents that the search for them may visit. */
-const SEARCH_STEPS = 4_000_000;
+/** Steps of the search for them. */
+const SEARCH_STEPS = 2_000_000;
+/** Vertices of one kind. */
+const MOST_VERTICES = 64;
 
 /** Σ_k weights[k] n_k ≤ bound. */
 interface Inequality {
@@ -87,6 +89,12 @@ function upperBounds(system: readonly Inequality[], usable: readonly boolean[]):
   upper.forEach((bound, k) => {
     if (bound === null)
       throw new InputError('infinite-order', `Nothing in the order bounds the number of vertices of kind ${k + 1}.`);
+    if (bound > MOST_VERTICES)
+      throw new LimitError(
+        `This order admits ${bound} vertices of one kind; the bound is ${MOST_VERTICES}.`,
+        MOST_VERTICES,
+        bound,
+      );
   });
   return upper as number[];
 }
@@ -126,28 +134,31 @@ function enumerate(system: readonly Inequality[], upper: readonly number[], note
     return rest;
   });
   const content = new Array<number>(upper.length).fill(0);
+  const room = scaled.map((row) => row[upper.length]!);
   let steps = 0;
   let contents = 0;
-  const descend = (k: number, room: readonly bigint[]): void => {
-    if (room.some((left, c) => left < least[c]![k]!)) return;
-    if (++steps > SEARCH_STEPS) throw tooMany();
+  const spend = (k: number, n: number): void => {
+    for (let c = 0; c < room.length; c++) room[c]! -= scaled[c]![k]! * BigInt(n);
+  };
+  const short = (k: number): number => room.findIndex((left, c) => left < least[c]![k]!);
+  const descend = (k: number): void => {
     if (k === upper.length) {
       if (note([...content]) && ++contents > LEDGER_CONTENTS) throw tooMany();
       return;
     }
-    for (let n = 0; n <= upper[k]!; n++) {
+    let n = 0;
+    for (; n <= upper[k]!; n++) {
+      if (++steps > SEARCH_STEPS) throw tooMany();
+      if (n > 0) spend(k, 1);
       content[k] = n;
-      descend(
-        k + 1,
-        room.map((left, c) => left - scaled[c]![k]! * BigInt(n)),
-      );
+      const missed = short(k + 1);
+      if (missed < 0) descend(k + 1);
+      else if (scaled[missed]![k]! > 0n) break;
     }
+    spend(k, -Math.min(n, upper[k]!));
     content[k] = 0;
   };
-  descend(
-    0,
-    scaled.map((row) => row[upper.length]!),
-  );
+  if (short(0) < 0) descend(0);
 }
 
 const tooMany = (): LimitError =>

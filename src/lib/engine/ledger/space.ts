@@ -5,7 +5,9 @@ import { binomial, SeriesIndex, type Splits } from '../exact/seriesIndex.ts';
 import type { Theory } from '../graph/theory.ts';
 
 /** Multiplications of big integers that one ledger may spend; a request beyond it is refused with this number. */
-export const LEDGER_STEPS = 20_000_000;
+export const LEDGER_STEPS = 40_000_000;
+/** What listing one split of a multi-index costs, in multiplications (measured: time and memory). */
+const SPLIT_STEPS = 12;
 /** Multi-indices that one ledger may hold in memory. */
 export const LEDGER_INDICES = 1_000_000;
 
@@ -33,8 +35,9 @@ export class CountingSpace {
     readonly theory: Theory,
     private readonly limit: number = LEDGER_STEPS,
   ) {
-    this.contents = new SeriesIndex(theory.kinds.length);
-    this.legs = new SeriesIndex(theory.partner.length);
+    const charge = (splits: number): void => this.spend(splits * SPLIT_STEPS);
+    this.contents = new SeriesIndex(theory.kinds.length, charge);
+    this.legs = new SeriesIndex(theory.partner.length, charge);
   }
 
   /** Counts `steps` multiplications. @throws LimitError beyond the limit. */
