@@ -7,7 +7,7 @@ import { bareVertices, CoreVertices, normalOrderedVertices, treeDressedVertices 
 /** Sum over connected components with content m and external points g, as labelled contractions. */
 export type ComponentSum = (m: number, g: number) => bigint;
 
-/** What the sum over components was computed from, in words, and the sums themselves. */
+/** The sums from which a request is put together. */
 export interface Components {
   readonly sum: ComponentSum;
   /** Z of the same vertices, when no filter looks at components: the direct way to `all` and `normalised`. */

@@ -1,11 +1,14 @@
 import { InputError, LimitError } from '../errors.ts';
-import { add, compare, divide, multiply, type Rational, rational, subtract, ZERO } from '../exact/rational.ts';
+import { add, compare, divide, multiply, type Rational, rational, sign, subtract, ZERO } from '../exact/rational.ts';
 import type { Content, CountingRequest } from '../graph/theory.ts';
 
-/** Vertex contents that one ledger may sum. */
+/** Vertex contents that one ledger may sum, and entries (contents × kinds) that they may have together. */
 export const LEDGER_CONTENTS = 100_000;
+const LEDGER_ENTRIES = 20_000_000;
 /** Steps of the search for them. */
-const SEARCH_STEPS = 2_000_000;
+const SEARCH_STEPS = 5_000_000;
+/** Rounds of tightening; each propagates a bound from one kind to the next. */
+const MOST_ROUNDS = 200;
 /** Vertices of one kind. */
 const MOST_VERTICES = 64;
 
@@ -75,17 +78,8 @@ function pair(weights: readonly Rational[], bound: Rational, through: boolean): 
 /** Largest n of each kind by repeated tightening of every inequality; null while unbounded. */
 function upperBounds(system: readonly Inequality[], usable: readonly boolean[]): number[] {
   const upper = usable.map((can): number | null => (can ? null : 0));
-  for (let round = 0, changed = true; changed && round < 200; round++) {
-    changed = false;
-    for (const inequality of system) {
-      for (let k = 0; k < upper.length; k++) {
-        const most = largest(inequality, upper, k);
-        if (most === null || (upper[k] !== null && upper[k]! <= most)) continue;
-        upper[k] = most;
-        changed = true;
-      }
-    }
-  }
+  for (let round = 0, changed = true; changed && round < MOST_ROUNDS; round++)
+    changed = system.map((inequality) => tighten(inequality, upper)).includes(true);
   upper.forEach((bound, k) => {
     if (bound === null)
       throw new InputError('infinite-order', `Nothing in the order bounds the number of vertices of kind ${k + 1}.`);
@@ -99,19 +93,27 @@ function upperBounds(system: readonly Inequality[], usable: readonly boolean[]):
   return upper as number[];
 }
 
-/** What one inequality says about n_k; null when nothing. */
-function largest({ weights, bound }: Inequality, upper: readonly (number | null)[], k: number): number | null {
-  const own = weights[k]!;
-  if (compare(own, ZERO) <= 0) return null;
+/**
+ * Tightens the upper bounds by one inequality: n_k ≤ (bound − Σ_{j≠k} least w_j n_j)/w_k for every w_k > 0, provided that all kinds with
+ * negative weight are bounded. True when a bound became smaller. O(kinds).
+ */
+function tighten({ weights, bound }: Inequality, upper: (number | null)[]): boolean {
   let room = bound;
   for (let j = 0; j < weights.length; j++) {
-    if (j === k || compare(weights[j]!, ZERO) >= 0) continue;
-    if (upper[j] === null) return null;
+    if (sign(weights[j]!) >= 0) continue;
+    if (upper[j] === null) return false;
     room = subtract(room, multiply(weights[j]!, rational(upper[j]!)));
   }
-  if (compare(room, ZERO) < 0) return 0;
-  const quotient = divide(room, own);
-  return Number(quotient.num / quotient.den);
+  let changed = false;
+  for (let k = 0; k < weights.length; k++) {
+    if (sign(weights[k]!) <= 0) continue;
+    const quotient = divide(room, weights[k]!);
+    const most = sign(room) < 0 ? 0 : Number(quotient.num / quotient.den);
+    if (upper[k] !== null && upper[k]! <= most) continue;
+    upper[k] = most;
+    changed = true;
+  }
+  return changed;
 }
 
 function satisfies(system: readonly Inequality[], content: Content): boolean {
@@ -124,47 +126,67 @@ function satisfies(system: readonly Inequality[], content: Content): boolean {
   });
 }
 
-/** Depth-first over n_1, n_2, …; a branch is left as soon as an inequality cannot be met by what remains. */
+/**
+ * Depth-first, the next kind used at each step; a branch is left as soon as an inequality cannot be met by what remains.
+ * Lexicographic order. O(contents on the way × kinds), depth = kinds used.
+ */
 function enumerate(system: readonly Inequality[], upper: readonly number[], note: (content: Content) => boolean): void {
   const scaled = system.map(({ weights, bound }) => toIntegers([...weights, bound]));
-  const least = scaled.map((row) => {
-    const rest = new Array<bigint>(upper.length + 1).fill(0n);
-    for (let k = upper.length - 1; k >= 0; k--)
-      rest[k] = rest[k + 1]! + (row[k]! < 0n ? row[k]! * BigInt(upper[k]!) : 0n);
-    return rest;
-  });
+  const least = scaled.map((row) => leastRemaining(row, upper));
   const content = new Array<number>(upper.length).fill(0);
   const room = scaled.map((row) => row[upper.length]!);
+  const cheapest = scaled.map((row) => cheapestRemaining(row, upper));
+  const most = Math.min(LEDGER_CONTENTS, Math.floor(LEDGER_ENTRIES / (upper.length + 1)));
   let steps = 0;
   let contents = 0;
   const spend = (k: number, n: number): void => {
     for (let c = 0; c < room.length; c++) room[c]! -= scaled[c]![k]! * BigInt(n);
   };
-  const short = (k: number): number => room.findIndex((left, c) => left < least[c]![k]!);
-  const descend = (k: number): void => {
-    if (k === upper.length) {
-      if (note([...content]) && ++contents > LEDGER_CONTENTS) throw tooMany();
-      return;
+  /** The first inequality that kinds from k on can no longer satisfy, or −1. */
+  const missed = (k: number): number => room.findIndex((left, c) => left < least[c]![k]!);
+  const descend = (first: number): void => {
+    if (room.every((left) => left >= 0n) && note([...content]) && ++contents > most) throw tooMany(most);
+    if (room.some((left, c) => left < cheapest[c]![first]!)) return;
+    for (let k = upper.length - 1; k >= first; k--) {
+      let n = 0;
+      while (n < upper[k]!) {
+        if (++steps > SEARCH_STEPS) throw tooMany(most);
+        content[k] = ++n;
+        spend(k, 1);
+        const inequality = missed(k + 1);
+        if (inequality < 0) descend(k + 1);
+        else if (scaled[inequality]![k]! > 0n) break;
+      }
+      spend(k, -n);
+      content[k] = 0;
     }
-    let n = 0;
-    for (; n <= upper[k]!; n++) {
-      if (++steps > SEARCH_STEPS) throw tooMany();
-      if (n > 0) spend(k, 1);
-      content[k] = n;
-      const missed = short(k + 1);
-      if (missed < 0) descend(k + 1);
-      else if (scaled[missed]![k]! > 0n) break;
-    }
-    spend(k, -Math.min(n, upper[k]!));
-    content[k] = 0;
   };
-  if (short(0) < 0) descend(0);
+  descend(0);
 }
 
-const tooMany = (): LimitError =>
+/** least[k]: the smallest value that kinds k, k + 1, … can add to a row. */
+function leastRemaining(row: readonly bigint[], upper: readonly number[]): bigint[] {
+  const least = new Array<bigint>(upper.length + 1).fill(0n);
+  for (let k = upper.length - 1; k >= 0; k--)
+    least[k] = least[k + 1]! + (row[k]! < 0n ? row[k]! * BigInt(upper[k]!) : 0n);
+  return least;
+}
+
+/** cheapest[k]: what one more vertex of any kind k, k + 1, … takes at least, where all of them take something; otherwise no limit. */
+function cheapestRemaining(row: readonly bigint[], upper: readonly number[]): bigint[] {
+  const unlimited = -(row.reduce((sum, w) => sum + (w < 0n ? -w : w), 0n) * BigInt(1 + Math.max(0, ...upper)));
+  const cheapest = new Array<bigint>(upper.length + 1).fill(unlimited);
+  for (let k = upper.length - 1, least: bigint | null = null; k >= 0; k--) {
+    if (upper[k]! > 0 && (least === null || row[k]! < least)) least = row[k]!;
+    if (least !== null && least > 0n) cheapest[k] = least;
+  }
+  return cheapest;
+}
+
+const tooMany = (most: number): LimitError =>
   new LimitError(
-    `This order admits more than ${LEDGER_CONTENTS} vertex contents, which is the bound of the independent count.`,
-    LEDGER_CONTENTS,
+    `This order admits more vertex contents than the independent count looks at: the bound is ${most}.`,
+    most,
   );
 
 function toIntegers(row: readonly Rational[]): bigint[] {
