@@ -37,7 +37,7 @@ export async function ensureBuild() {
   if (made && stampMatches('build', wanted)) return;
   console.error('Building …');
   run(join(root, 'node_modules', '.bin', 'astro'), ['build'], {
-    env: { ...process.env, ASTRO_TELEMETRY_DISABLED: '1' },
+    env: { ...process.env, ASTRO_TELEMETRY_DISABLED: '1', NODE_ENV: 'production' },
   });
   precompress(join(root, 'dist', 'client'));
   await ensureBundle('src/jobs/expand.ts', 'jobs/expand.mjs');

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type { StoredDiagram } from '#contract/job.ts';
+import { readCursor } from './cursor.ts';
 import { FLAGS } from './engine.ts';
 import { Refusal } from './refusal.ts';
 
@@ -36,29 +37,46 @@ export interface Clause {
   values: (string | number)[];
 }
 
-const COLUMNS: Record<string, string[]> = {
+/** One part of a sort key: an SQL expression, its kind, and its value in a row. */
+interface Key {
+  sql: string;
+  number: boolean;
+  of(row: StoredDiagram): string | number;
+}
+
+const POSITION: Key = { sql: 'position', number: true, of: (row) => row.position };
+const KEYS: Record<string, Key[]> = {
   position: [],
-  loops: ['loops'],
-  factor: ['length(symmetry_factor)', 'symmetry_factor'],
-  shape: ['shape'],
+  loops: [{ sql: 'loops', number: true, of: (row) => row.loops }],
+  // Factors of any size are text: the longer one is the larger.
+  factor: [
+    { sql: 'length(symmetry_factor)', number: true, of: (row) => row.symmetryFactor.length },
+    { sql: 'symmetry_factor', number: false, of: (row) => row.symmetryFactor },
+  ],
+  shape: [{ sql: 'shape', number: false, of: (row) => row.shape }],
 };
 
 export interface SortPlan {
-  /** Expressions of the key, the position last. */
-  keys: string[];
+  /** The position comes last, so the order is total. */
+  keys: Key[];
   descending: boolean;
   keyOf(row: StoredDiagram): (string | number)[];
 }
 
 export function sortPlan(sort: Sort): SortPlan {
-  const name = sort.replace('-', '');
-  const keyOf = (row: StoredDiagram): (string | number)[] => {
-    if (name === 'loops') return [row.loops, row.position];
-    if (name === 'factor') return [row.symmetryFactor.length, row.symmetryFactor, row.position];
-    if (name === 'shape') return [row.shape, row.position];
-    return [row.position];
-  };
-  return { keys: [...COLUMNS[name]!, 'position'], descending: sort.startsWith('-'), keyOf };
+  const keys = [...KEYS[sort.replace('-', '')]!, POSITION];
+  return { keys, descending: sort.startsWith('-'), keyOf: (row) => keys.map((key) => key.of(row)) };
+}
+
+/** The condition that a row stands beyond the last one seen. @throws Refusal when the cursor belongs to another sort. */
+export function beyondClause({ keys, descending }: SortPlan, after: string | undefined): Clause[] {
+  const seen = readCursor(after ?? null);
+  if (!seen) return [];
+  const values = seen.map((part, at) => (keys[at]?.number ? Number(part) : part));
+  if (seen.length !== keys.length || values.some((value) => Number.isNaN(value)))
+    throw new Refusal('bad-request', 'The value of "after" belongs to another sort.');
+  const left = keys.map(({ sql }) => sql).join(', ');
+  return [{ sql: `(${left}) ${descending ? '<' : '>'} (${keys.map(() => '?').join(', ')})`, values }];
 }
 
 const FLAG_OF = {

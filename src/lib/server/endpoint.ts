@@ -134,15 +134,3 @@ export function endpoint<M extends Method>(handlers: Record<M, Handler>): Record
   };
   return routes;
 }
-
-/** A weak cache check on results that never change: answers 304 when the asker has this version. */
-export function immutable(call: Call, tag: string, make: () => Response): Response {
-  const etag = `"${tag}"`;
-  const headers = { etag, 'cache-control': 'private, no-cache' };
-  const known = call.context.request.headers.get('if-none-match');
-  if (known?.split(',').some((entry) => entry.trim().replace(/^W\//, '') === etag))
-    return new Response(null, { status: 304, headers });
-  const response = make();
-  for (const [name, value] of Object.entries(headers)) response.headers.set(name, value);
-  return response;
-}

@@ -73,9 +73,12 @@ export function previewModel(input: ModelInput): ModelPreview {
     notes: [],
   };
 }
-const countOf = (request: ExpansionRequest): number => { const { total } = request.order as { total?: number }; return total === undefined ? 3 : 4 ** Number(total); };
+const countOf = (request: ExpansionRequest): number => {
+  const { total } = request.order as { total?: number };
+  return total === undefined ? 3 : 4 ** Number(total);
+};
 export function prepare(request: ExpansionRequest): Prepared {
-  if (!request.lagrangian?.includes('phi'))
+  if (request.legs.includes('psi') || request.lagrangian === 'x')
     throw new InputError('syntax', 'interim', { line: 1, column: 1, length: 1 });
   return {
     names: { couplingLatex: (n) => n },

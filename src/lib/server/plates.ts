@@ -1,9 +1,13 @@
 import type { GroupBy, Plate } from '#contract/api.ts';
-import type { StoredDiagram } from '#contract/job.ts';
 import type { DiagramDTO } from '#contract/result.ts';
 import { add, format, type Rational, rational, ZERO } from '#engine/exact/rational.ts';
+import { findRow } from './diagram-rows.ts';
 import { type Prepared, renderDiagram } from './engine.ts';
 import { runtime } from './runtime.ts';
+
+/** Grouping by shape can give nearly as many groups as there are diagrams: nobody looks at more than these. */
+const MOST = 500;
+const KEPT = 100;
 
 const COLUMN: Record<GroupBy, string> = {
   couplings: 'order_key',
@@ -26,6 +30,14 @@ interface Group {
   weight: Rational;
 }
 
+interface Body {
+  id: number;
+  state: string;
+}
+
+/** Groups of complete bodies: they never change, and counting a large one takes a fraction of a second. */
+const cache = new Map<string, { groups: Group[]; total: number }>();
+
 /** Counts per (group, factor): the sum of weights of a group is Σ count/S, exactly. */
 function partsOf(bodyId: number, by: GroupBy): Part[] {
   const column = COLUMN[by];
@@ -34,7 +46,7 @@ function partsOf(bodyId: number, by: GroupBy): Part[] {
   return runtime().db.$client.prepare<[number], Part>(sql).all(bodyId);
 }
 
-function groupsOf(parts: readonly Part[]): Group[] {
+function collect(parts: readonly Part[]): Group[] {
   const groups = new Map<string, Group>();
   for (const part of parts) {
     const key = String(part.key);
@@ -47,27 +59,35 @@ function groupsOf(parts: readonly Part[]): Group[] {
   return [...groups.values()].sort((a, b) => a.first - b.first);
 }
 
+function groupsOf(body: Body, by: GroupBy): { groups: Group[]; total: number } {
+  const key = `${body.id} ${by}`;
+  const known = cache.get(key);
+  if (known) return known;
+  const all = collect(partsOf(body.id, by));
+  const answer = { groups: all.slice(0, MOST), total: all.length };
+  if (body.state !== 'complete') return answer;
+  cache.set(key, answer);
+  if (cache.size > KEPT) cache.delete(cache.keys().next().value!);
+  return answer;
+}
+
 function firstDiagram(prepared: Prepared, bodyId: number, position: number): DiagramDTO {
-  const sql = `SELECT position, label, body, loops, symmetry_factor AS symmetryFactor, weight, pairings,
-    order_key AS "order", shape, flags FROM diagrams WHERE body_id = ? AND position = ?`;
-  return renderDiagram(
-    prepared,
-    runtime().db.$client.prepare<[number, number], StoredDiagram>(sql).get(bodyId, position)!,
-  );
+  return renderDiagram(prepared, findRow(bodyId, String(position))!);
 }
 
 const LOOPS = ['Tree diagrams', 'One loop', 'Two loops', 'Three loops', 'Four loops', 'Five loops', 'Six loops'];
 
 /** Titles of a group: plain words, and LaTeX where it is mathematics. */
-function titleOf(prepared: Prepared, bodyId: number, by: GroupBy, group: Group): { title: string; titleLatex: string } {
-  if (by === 'loops') {
-    const title = LOOPS[Number(group.key)] ?? `${group.key} loops`;
-    return { title, titleLatex: `L = ${group.key}` };
-  }
-  if (by === 'factor') return { title: `S = ${group.key}`, titleLatex: `S = ${group.key}` };
-  const diagram = firstDiagram(prepared, bodyId, group.first);
-  if (by === 'shape') return { title: `Shape of no. ${group.first}`, titleLatex: `\\text{no. }${group.first}` };
-  const powers = Object.entries(diagram.order);
+function titleOf(
+  prepared: Prepared,
+  bodyId: number,
+  by: GroupBy,
+  { key, first }: Group,
+): { title: string; titleLatex: string } {
+  if (by === 'loops') return { title: LOOPS[Number(key)] ?? `${key} loops`, titleLatex: `L = ${key}` };
+  if (by === 'factor') return { title: `S = ${key}`, titleLatex: `S = ${key}` };
+  if (by === 'shape') return { title: `Shape of no. ${first}`, titleLatex: `\\text{Shape of no. }${first}` };
+  const powers = Object.entries(firstDiagram(prepared, bodyId, first).order);
   if (powers.length === 0) return { title: 'No coupling', titleLatex: '1' };
   const latexOf = (name: string) => prepared.names.couplingLatex(name);
   return {
@@ -78,13 +98,15 @@ function titleOf(prepared: Prepared, bodyId: number, by: GroupBy, group: Group):
   };
 }
 
-/** The groups of a stored list. One pass over an index; costs O(rows), a few milliseconds for thousands. */
-export function platesOf(prepared: Prepared, bodyId: number, by: GroupBy): Plate[] {
-  return groupsOf(partsOf(bodyId, by)).map((group) => ({
+/** The groups of a stored list, the first 500, and how many there are. One pass over the rows: O(rows), then from memory. */
+export function platesOf(prepared: Prepared, body: Body, by: GroupBy): { items: Plate[]; total: number } {
+  const { groups, total } = groupsOf(body, by);
+  const items = groups.map((group) => ({
     key: group.key,
-    ...titleOf(prepared, bodyId, by, group),
+    ...titleOf(prepared, body.id, by, group),
     count: group.count,
     first: group.first,
     weight: format(group.weight),
   }));
+  return { items, total };
 }

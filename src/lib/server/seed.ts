@@ -7,6 +7,7 @@ import { createExpansion, getExpansion } from './expansions.ts';
 import { newId, now } from './ids.ts';
 import { createModel } from './models.ts';
 import { hashPassword } from './password.ts';
+import { errorOf } from './refusal.ts';
 import { runtime } from './runtime.ts';
 import type { Role, SessionUser, Viewer } from './viewer.ts';
 
@@ -79,17 +80,22 @@ export async function seedDemo(): Promise<{ computed: number; failed: string[] }
   // The author works in the group's workspace here, so that the group owns what is made.
   const viewer: Viewer = { user: { ...author, workspace: groupId }, session: null, visitor: null, address: 'seed' };
   const made: { id: string; title: string }[] = [];
+  const failed: string[] = [];
   for (const demo of DEMO_MODELS) {
     const model = modelId(viewer, groupId, demo);
     demo.expansions.forEach(({ title }, at) => {
-      const { expansion, created } = createExpansion(viewer, { request: requestOf(demo, at), title, modelId: model });
-      if (created) made.push({ id: expansion.id, title });
+      try {
+        const { expansion, created } = createExpansion(viewer, { request: requestOf(demo, at), title, modelId: model });
+        if (created) made.push({ id: expansion.id, title });
+      } catch (error) {
+        failed.push(`${title}: ${errorOf(error).message}`);
+      }
     });
   }
   const ids = made.map(({ id }) => id);
   if (ids.length > 0)
     runtime().db.update(expansions).set({ visibility: 'public' }).where(inArray(expansions.id, ids)).run();
   const states = await Promise.all(made.map(async ({ id, title }) => ({ title, state: await ended(viewer, id) })));
-  const failed = states.filter(({ state }) => state !== 'complete').map(({ title, state }) => `${title}: ${state}`);
-  return { computed: made.length - failed.length, failed };
+  const unfinished = states.filter(({ state }) => state !== 'complete').map(({ title, state }) => `${title}: ${state}`);
+  return { computed: made.length - unfinished.length, failed: [...failed, ...unfinished] };
 }

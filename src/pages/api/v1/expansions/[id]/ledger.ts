@@ -1,4 +1,7 @@
 import { getLedger } from '#server/diagrams.ts';
-import { endpoint, json } from '#server/endpoint.ts';
+import { endpoint } from '#server/endpoint.ts';
+import { immutable } from '#server/immutable.ts';
 
-export const { GET, ALL } = endpoint({ GET: (call) => json(getLedger(call.viewer, call.param('id'))) });
+export const { GET, ALL } = endpoint({
+  GET: (call) => immutable(call, () => getLedger(call.viewer, call.param('id'))),
+});

@@ -1,7 +1,8 @@
-import { listPlates } from '#server/diagrams.ts';
-import { endpoint, json } from '#server/endpoint.ts';
+import { platesPage } from '#server/diagrams.ts';
+import { endpoint } from '#server/endpoint.ts';
+import { immutable } from '#server/immutable.ts';
 import { platesQuery } from '#server/schemas.ts';
 
 export const { GET, ALL } = endpoint({
-  GET: (call) => json({ items: listPlates(call.viewer, call.param('id'), call.query(platesQuery).by) }),
+  GET: (call) => immutable(call, () => platesPage(call.viewer, call.param('id'), call.query(platesQuery).by)),
 });
