@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { modelSchema } from '#contract/request.ts';
+import { lineDiff } from '#features/model/diff.ts';
 import { draftOf, EMPTY, inputOf, override, overrideOf } from '#features/model/draft.ts';
 import { examples } from '#features/model/examples.ts';
 import { draftFromForm } from '#features/model/form.ts';
@@ -156,5 +157,30 @@ describe('form', () => {
 
   it('reads an empty form as an empty draft', () => {
     expect(draftFromForm(new FormData())).toEqual(EMPTY);
+  });
+});
+
+describe('difference of two revisions', () => {
+  it('keeps common lines and marks the others', () => {
+    expect(lineDiff('a\nb\nc', 'a\nx\nc')).toEqual([
+      { kind: 'same', text: 'a' },
+      { kind: 'gone', text: 'b' },
+      { kind: 'new', text: 'x' },
+      { kind: 'same', text: 'c' },
+    ]);
+  });
+
+  it('gives both texts back', () => {
+    const text = fc
+      .array(fc.constantFrom('a', 'b', 'c', ''), { minLength: 1, maxLength: 8 })
+      .map((lines) => lines.join('\n'));
+    fc.assert(
+      fc.property(text, text, (before, after) => {
+        const lines = lineDiff(before, after);
+        const without = (kind: string) => lines.filter((line) => line.kind !== kind).map((line) => line.text);
+        expect(without('new').join('\n')).toBe(before);
+        expect(without('gone').join('\n')).toBe(after);
+      }),
+    );
   });
 });
