@@ -73,13 +73,14 @@ function Form({ draft: first, preview: firstPreview, model, signedIn }: EditorPr
     window.location.assign(expandAddress(id, draft));
   };
 
-  const place = preview.error && current ? offsetsOf(draft.lagrangian, preview.error) : null;
+  // For the moment until the new answer the old marks stand, so that they do not flicker at each key.
+  const place = preview.error ? offsetsOf(draft.lagrangian, preview.error) : null;
   const select = (start: number, end: number) => {
     input.current?.focus();
     input.current?.setSelectionRange(start, end);
   };
   const fix = (suggestion: string) => {
-    if (!place) return;
+    if (!place || !current) return;
     const fixed = replaceStretch(draft.lagrangian, place, suggestion);
     edit({ lagrangian: fixed.text });
     requestAnimationFrame(() => select(fixed.caret, fixed.caret));
@@ -119,7 +120,7 @@ function Form({ draft: first, preview: firstPreview, model, signedIn }: EditorPr
           <LagrangianInput
             value={draft.lagrangian}
             onChange={(lagrangian) => edit({ lagrangian }, 'lagrangian')}
-            marks={marksOf(preview, draft.lagrangian, place, lit, current)}
+            marks={marksOf(preview, draft.lagrangian, place, lit)}
             invalid={wrong}
             inputRef={input}
           />
@@ -145,14 +146,14 @@ function Form({ draft: first, preview: firstPreview, model, signedIn }: EditorPr
         <FieldTable preview={preview} draft={draft} edit={edit} />
         <ParameterTable preview={preview} draft={draft} edit={edit} />
       </div>
+      <SaveBar
+        copy={model !== null && !model.mine && saved.id === null}
+        {...{ alive, signedIn, dirty, canUndo, canRedo, undo, redo, save, expand }}
+        saving={saving.isPending}
+        savedAt={saved.id}
+        failed={saving.error instanceof ApiError ? saving.error : null}
+      />
       <div className="editor-side">
-        <SaveBar
-          copy={model !== null && !model.mine && saved.id === null}
-          {...{ alive, signedIn, dirty, canUndo, canRedo, undo, redo, save, expand }}
-          saving={saving.isPending}
-          savedAt={saved.id}
-          failed={saving.error instanceof ApiError ? saving.error : null}
-        />
         <Rules
           rules={preview.rules}
           light={setLit}
@@ -181,15 +182,13 @@ function TitleFields({ draft, edit }: { draft: Draft; edit: (part: Partial<Draft
   );
 }
 
-/** The stretches to draw under: the mistake, notes, and what a rule lights. Only marks of this very text are drawn. */
+/** The stretches to draw under: the mistake, notes, and what a rule lights. */
 function marksOf(
   preview: ModelPreview,
   text: string,
   place: { readonly start: number; readonly end: number } | null,
   lit: readonly { readonly start: number | null; readonly end: number | null }[],
-  current: boolean,
 ): readonly Mark[] {
-  if (!current) return [];
   const notes = preview.notes.map(({ start, end }) => ({ start, end, kind: 'note' as const }));
   const lights = lit.map(({ start, end }) => ({ start, end, kind: 'lit' as const }));
   const marks = [...notes, ...lights].flatMap(({ start, end, kind }) =>

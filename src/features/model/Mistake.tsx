@@ -12,7 +12,7 @@ interface Props {
 export function Mistake({ error, text, onFix, onGo, alive }: Props) {
   const line = error.line === null ? undefined : text.split('\n')[error.line - 1];
   return (
-    <div id="mistake" className="notice notice-bad mistake">
+    <div id="mistake" className="notice notice-bad mistake-card">
       {line !== undefined && error.column !== null && (
         <pre className="scroll-x" aria-hidden="true">
           {line}

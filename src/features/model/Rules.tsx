@@ -1,3 +1,4 @@
+import { Fragment } from 'react';
 import type { ModelPreview } from '#contract/api.ts';
 import { Copy, Formula, Panel } from './parts.tsx';
 
@@ -17,18 +18,20 @@ function Origin({ terms, light, go }: Lighting & { readonly terms: readonly Term
     <span className="origin">
       from{' '}
       {terms.map((term, index) => (
-        <button
-          type="button"
-          className="link-btn"
-          // biome-ignore lint/suspicious/noArrayIndexKey: terms of one rule have no identity but their place
-          key={index}
-          disabled={term.start === null}
-          onFocus={() => light([term])}
-          onBlur={() => light([])}
-          onClick={() => go(term)}
-        >
-          <code>{term.text}</code>
-        </button>
+        // biome-ignore lint/suspicious/noArrayIndexKey: terms of one rule have no identity but their place
+        <Fragment key={index}>
+          {index > 0 && ' and '}
+          <button
+            type="button"
+            className="link-btn"
+            disabled={term.start === null}
+            onFocus={() => light([term])}
+            onBlur={() => light([])}
+            onClick={() => go(term)}
+          >
+            <code>{term.text}</code>
+          </button>
+        </Fragment>
       ))}
     </span>
   );

@@ -95,7 +95,7 @@ export function ParameterTable({ preview, draft, edit }: Props) {
                   <td>
                     <span className="m">{parameter.dimension}</span>
                     {parameter.renormalisability !== '' && (
-                      <span className="quiet block">{parameter.renormalisability}</span>
+                      <span className="quiet">, {parameter.renormalisability}</span>
                     )}
                   </td>
                   <td>

@@ -19,7 +19,7 @@ export function Copy({ text, what, label = 'Copy LaTeX' }: { text: string; what:
     setTimeout(() => setSaid(label), 2000);
   };
   return (
-    <button type="button" className="btn btn-small" onClick={copy} aria-label={`${said}: ${what}`}>
+    <button type="button" className="btn btn-small btn-quiet" onClick={copy} aria-label={`${said}: ${what}`}>
       {said}
     </button>
   );
