@@ -155,7 +155,7 @@ function Form({ draft: first, preview: firstPreview, model, signedIn }: EditorPr
       />
       <div className="editor-side">
         <Rules
-          rules={preview.rules}
+          preview={preview}
           light={setLit}
           go={({ start, end }) => start !== null && select(start, end ?? start)}
         />

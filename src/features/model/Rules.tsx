@@ -37,23 +37,45 @@ function Origin({ terms, light, go }: Lighting & { readonly terms: readonly Term
   );
 }
 
+type Fields = ModelPreview['fields'];
+
+/** Half-lines of a rule as on paper: h h φ φ*. */
+function Names({ names, fields }: { readonly names: readonly string[]; readonly fields: Fields }) {
+  return (
+    <span className="rule-name">
+      {names.map((name, index) => {
+        const conjugate = name.endsWith('^*');
+        const field = fields.find((one) => one.name === name.replace('^*', ''));
+        return (
+          // biome-ignore lint/suspicious/noArrayIndexKey: equal half-lines have no identity but their place
+          <span key={index}>
+            {field ? <Formula html={field.mathml} /> : name}
+            {field && conjugate && '*'}
+          </span>
+        );
+      })}
+    </span>
+  );
+}
+
 interface RuleProps extends Lighting {
-  readonly name: string;
+  readonly names: readonly string[];
+  readonly fields: Fields;
   readonly mathml: string;
   readonly latex: string;
   readonly terms: readonly Term[];
   readonly permutations: readonly string[];
 }
 
-function Rule({ name, mathml, latex, terms, permutations, light, go }: RuleProps) {
+function Rule({ names, fields, mathml, latex, terms, permutations, light, go }: RuleProps) {
   return (
     // Hovering is a convenience: the same is done by focusing the button inside.
     <li className="rule" onPointerEnter={() => light(terms)} onPointerLeave={() => light([])}>
-      <span className="rule-name m">{name}</span>
+      <Names names={names} fields={fields} />
       <Formula html={mathml} className="rule-factor scroll-x" />
       <span className="rule-foot">
         <Origin terms={terms} light={light} go={go} />
-        <Copy text={latex} what={`rule of ${name}`} />
+        <Copy text={latex} what={`rule of ${names.join(' ')}`} />
       </span>
       {permutations.length > 1 && (
         <details className="rule-foot">
@@ -72,7 +94,8 @@ function Rule({ name, mathml, latex, terms, permutations, light, go }: RuleProps
   );
 }
 
-export function Rules({ rules, ...lighting }: Lighting & { readonly rules: ModelPreview['rules'] }) {
+export function Rules({ preview, ...lighting }: Lighting & { readonly preview: ModelPreview }) {
+  const { rules, fields } = preview;
   if (rules.propagators.length + rules.vertices.length === 0)
     return (
       <Panel title="Feynman rules">
@@ -86,7 +109,8 @@ export function Rules({ rules, ...lighting }: Lighting & { readonly rules: Model
           {rules.propagators.map((rule, index) => (
             <Rule
               key={rule.field}
-              name={rule.field}
+              names={[rule.field]}
+              fields={fields}
               mathml={rules.mathml.propagators[index] ?? ''}
               latex={rule.latex}
               terms={rule.terms}
@@ -102,7 +126,8 @@ export function Rules({ rules, ...lighting }: Lighting & { readonly rules: Model
           {rules.vertices.map((rule, index) => (
             <Rule
               key={`${rule.coupling} ${rule.fields.join(' ')}`}
-              name={rule.fields.join(' ')}
+              names={rule.fields}
+              fields={fields}
               mathml={rules.mathml.vertices[index] ?? ''}
               latex={rule.latex}
               terms={rule.terms}
