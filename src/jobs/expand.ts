@@ -1,4 +1,4 @@
-import type { ErrorObject } from '#contract/errors.ts';
+import { type ErrorObject, errorObject } from '#contract/errors.ts';
 import type { JobAcknowledgement, JobEnd, JobMessage, JobTask, StoredDiagram } from '#contract/job.ts';
 import { prepare, runExpansion } from './engine.ts';
 import { misbehave } from './misbehave.ts';
@@ -54,20 +54,12 @@ class Outlet {
   }
 }
 
-function errorOf(error: unknown): ErrorObject | null {
-  if (!(error instanceof Error) || (error.name !== 'InputError' && error.name !== 'LimitError')) return null;
-  const { code, place } = error as Error & {
-    code: ErrorObject['code'];
-    place?: { line: number; column: number } | null;
-  };
-  return { code, message: error.message, line: place?.line ?? null, column: place?.column ?? null };
-}
-
 async function expand(task: JobTask): Promise<JobEnd> {
   const prepared = prepare(task.request);
   const outlet = new Outlet();
   const run = runExpansion(prepared);
-  post({ kind: 'progress', classes: 0, phase: 'diagrams' });
+  // The independent count comes first: nothing streams until it is done.
+  post({ kind: 'progress', classes: 0, phase: 'counting' });
   let classes = 0;
   for (;;) {
     const step = run.next();
@@ -103,7 +95,7 @@ export default async function job(task: JobTask): Promise<JobEnd> {
   try {
     return await expand(task);
   } catch (error) {
-    const answer = errorOf(error);
+    const answer = errorObject(error);
     if (answer) return { ok: false, error: answer };
     throw error;
   }
