@@ -5,7 +5,7 @@
  */
 import { spawnSync } from 'node:child_process';
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { existsSync, lstatSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 
@@ -47,7 +47,11 @@ export function run(command, args, options = {}) {
 /** Installs the locked dependencies when node_modules is missing or was made from another lock file. */
 export function ensureDependencies() {
   const wanted = hashOf(['package-lock.json', '.npmrc']);
-  if (existsSync(join(root, 'node_modules')) && stampMatches('dependencies', wanted)) return;
+  const folder = join(root, 'node_modules');
+  // A link belongs to another checkout: npm would empty the folder behind it.
+  if (lstatSync(folder, { throwIfNoEntry: false })?.isSymbolicLink()) return;
+  // npm writes its own lock last: without it an installation was interrupted.
+  if (existsSync(join(folder, '.package-lock.json')) && stampMatches('dependencies', wanted)) return;
   console.error('Installing dependencies (npm ci) …');
   run('npm', ['ci', '--include=dev', '--no-fund', '--no-audit']);
   writeStamp('dependencies', wanted);
