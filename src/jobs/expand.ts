@@ -3,11 +3,12 @@ import type { JobAcknowledgement, JobEnd, JobMessage, JobTask, StoredDiagram } f
 import { prepare, runExpansion } from './engine.ts';
 import { misbehave } from './misbehave.ts';
 
-const CHUNK_ROWS = 250;
+/** Few enough that the server stores them in a few milliseconds, between requests. */
+const CHUNK_ROWS = 100;
 /** Rows go out at least this often, so that the first diagrams are seen at once. */
 const CHUNK_MS = 150;
 /** Chunks that may be under way: the child never runs ahead of the disk. */
-const WINDOW = 4;
+const WINDOW = 2;
 
 // The server that owns this process is gone: nobody will store what is computed here.
 process.on('disconnect', () => process.exit(0));

@@ -27,8 +27,13 @@ interface Running {
   timedOut: boolean;
   /** Its end is written: what still comes from the process is dropped. */
   ended: boolean;
+  /** First position that listeners have not been told of, and when they were last told. */
+  untold: number;
+  toldAt: number;
 }
 
+/** Listeners hear of progress at most this often. */
+const TELL_MS = 150;
 const TEST_TITLE = 'test job: ';
 
 /**
@@ -144,7 +149,7 @@ export class Jobs {
     };
     const started = performance.now();
     const process = this.#processes.start(task, (message) => this.#onMessage(job, message));
-    const running: Running = { job, process, progress, timedOut: false, ended: false };
+    const running: Running = { job, process, progress, timedOut: false, ended: false, untold: 1, toldAt: 0 };
     this.#running.set(job.bodyId, running);
     const clock = setTimeout(() => {
       running.timedOut = true;
@@ -172,11 +177,8 @@ export class Jobs {
     const { progress } = running;
     if (message.kind === 'chunk') {
       if (!this.#stored(running, message.rows)) return;
-      const from = message.rows[0]!.position;
-      const to = message.rows.at(-1)!.position;
-      progress.classes = to;
+      progress.classes = message.rows.at(-1)!.position;
       progress.phase = 'diagrams';
-      this.#emit(job.bodyId, { type: 'diagrams', from, to });
     } else {
       progress.classes = Math.max(progress.classes, message.classes);
       progress.phase = message.phase;
@@ -184,6 +186,16 @@ export class Jobs {
     // Never quite done before it is: the estimate may be short.
     if (progress.estimated)
       progress.fraction = Math.max(progress.fraction ?? 0, Math.min(0.99, progress.classes / progress.estimated));
+    if (performance.now() - running.toldAt > TELL_MS) this.#tell(running);
+  }
+
+  /** Tells listeners how far it is; not at every chunk, which may come a hundred times a second. */
+  #tell(running: Running): void {
+    const { job, progress } = running;
+    running.toldAt = performance.now();
+    if (progress.classes >= running.untold)
+      this.#emit(job.bodyId, { type: 'diagrams', from: running.untold, to: progress.classes });
+    running.untold = progress.classes + 1;
     this.#emit(job.bodyId, { type: 'progress', progress: { ...progress } });
   }
 
@@ -213,6 +225,7 @@ export class Jobs {
     if (!end.ok) return this.#fail(running, end.error);
     const state = this.#store.complete(job, end, Math.round(performance.now() - started));
     if (state === 'unbalanced') this.log.error({ job: job.id, body: job.bodyId }, 'a ledger does not balance');
+    this.#tell(running);
     this.#emit(job.bodyId, { type: 'state', state });
   }
 

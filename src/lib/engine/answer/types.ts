@@ -17,6 +17,8 @@ export interface Summary {
 export interface LedgerRow {
   /** Vertex content in words of the model, e.g. { "lambda": "2" }. */
   order: Record<string, string>;
+  /** Vertices of each kind, by name. */
+  vertices: Record<string, number>;
   list: { classes: number; weight: string; pairings: string };
   independent: { weight: string | null; pairings: string | null };
   balanced: boolean;

@@ -71,7 +71,13 @@ export class JobStore {
           row.flags,
         );
     });
-    write.immediate();
+    // Nobody is promised a chunk: the log is flushed by the final transaction, which covers all that came before it.
+    this.#db.$client.pragma('synchronous = NORMAL');
+    try {
+      write.immediate();
+    } finally {
+      this.#db.$client.pragma('synchronous = FULL');
+    }
   }
 
   /**
