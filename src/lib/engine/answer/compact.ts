@@ -1,4 +1,6 @@
+import type { Numbering } from '../graph/canonical.ts';
 import type { Diagram, Line } from '../graph/diagram.ts';
+import type { Facts } from '../graph/facts.ts';
 
 /**
  * A diagram of a stored body: integers in the canonical request's numbering, no names. One body serves every model that is
@@ -7,7 +9,7 @@ import type { Diagram, Line } from '../graph/diagram.ts';
 export interface CompactDiagram {
   /** 1-based place in the canonical list. */
   readonly position: number;
-  /** JSON: [kinds, legs, [from, to, type, …]]. */
+  /** JSON: [kinds, legs, [from, to, type, …], numberings of the label]. */
   readonly body: string;
   /** Canonical label without names. */
   readonly label: string;
@@ -25,13 +27,27 @@ export interface CompactDiagram {
 
 export const FLAGS = { connected: 1, onePI: 2, selfContraction: 4, tadpole: 8 } as const;
 
-export function packBody({ kinds, legs, lines }: Diagram): string {
-  return JSON.stringify([kinds, legs, lines.flatMap(({ from, to, type }) => [from, to, type])]);
+/** The facts of a diagram as a sum of FLAGS. */
+export function factsFlags(facts: Facts): number {
+  return (
+    (facts.connected ? FLAGS.connected : 0) +
+    (facts.onePI ? FLAGS.onePI : 0) +
+    (facts.hasSelfContraction ? FLAGS.selfContraction : 0) +
+    (facts.hasTadpole ? FLAGS.tadpole : 0)
+  );
 }
 
-export function unpackBody(body: string): Diagram {
-  const [kinds, legs, flat] = JSON.parse(body) as [number[], number[], number[]];
+type Packed = [number[], number[], number[], [number[], number[]][]];
+
+export function packBody({ kinds, legs, lines }: Diagram, numberings: readonly Numbering[]): string {
+  const flat = lines.flatMap(({ from, to, type }) => [from, to, type]);
+  return JSON.stringify([kinds, legs, flat, numberings.map((numbering) => [numbering.fields, numbering.kinds])]);
+}
+
+/** The diagram of a stored body, and the numberings that its names are written in (graph/canonical). */
+export function unpackBody(body: string): Diagram & { readonly numberings: readonly Numbering[] } {
+  const [kinds, legs, flat, numberings] = JSON.parse(body) as Packed;
   const lines: Line[] = [];
   for (let i = 0; i < flat.length; i += 3) lines.push({ from: flat[i]!, to: flat[i + 1]!, type: flat[i + 2]! });
-  return { kinds, legs, lines };
+  return { kinds, legs, lines, numberings: numberings.map(([fields, order]) => ({ fields, kinds: order })) };
 }

@@ -1,6 +1,6 @@
 import { InputError } from '../errors.ts';
 import type { Model } from '../lagrangian/model.ts';
-import { readOperator } from '../lagrangian/readOperator.ts';
+import { readName } from '../lagrangian/names.ts';
 import type { NamedTheory } from './theory.ts';
 
 const MOST_LEGS = 12;
@@ -11,15 +11,22 @@ const MOST_LEGS = 12;
  *
  * @throws InputError wrong-legs for a name that is no field of the model, or for too many legs.
  */
-export function readLegs(named: NamedTheory, model: Model, legs: readonly string[]): { types: number[]; names: string[] } {
+export function readLegs(
+  named: NamedTheory,
+  model: Model,
+  legs: readonly string[],
+): { types: number[]; names: string[] } {
   if (legs.length > MOST_LEGS)
     throw new InputError('wrong-legs', `A correlator may have at most ${MOST_LEGS} legs; this one has ${legs.length}.`);
   const types = legs.map((leg, at) => {
-    const operator = readOperator(leg);
+    const operator = readName(leg);
     const field = operator && model.fields.find(({ name }) => name === operator.field);
     if (!operator || !field) {
       const known = named.halves.map((half) => half.text).join(', ');
-      throw new InputError('wrong-legs', `Leg ${at + 1}, "${leg.slice(0, 40)}", is no field of this model; its fields are ${known}.`);
+      throw new InputError(
+        'wrong-legs',
+        `Leg ${at + 1}, "${leg.slice(0, 40)}", is no field of this model; its fields are ${known}.`,
+      );
     }
     const conjugate = operator.conjugate && field.kind === 'complex';
     return named.halves.findIndex((half) => half.field === field.name && half.conjugate === conjugate);

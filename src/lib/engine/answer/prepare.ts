@@ -3,8 +3,9 @@ import { type CanonicalRequest, canonicalRequest, requestKey } from '../expansio
 import { InfiniteOrder } from '../expansion/infiniteOrder.ts';
 import { contents } from '../expansion/orders.ts';
 import type { Content, CountingRequest, Drop, Keep } from '../graph/theory.ts';
+import type { ModelSource } from '../lagrangian/input.ts';
 import type { Model } from '../lagrangian/model.ts';
-import { type ModelInput, readModel } from '../lagrangian/readModel.ts';
+import { readModel } from '../lagrangian/read.ts';
 import { conventionRecord } from '../rules/conventions.ts';
 import { modelRules } from '../rules/rules.ts';
 import { readLegs } from './legs.ts';
@@ -13,7 +14,7 @@ import { type NamedTheory, theoryOf } from './theory.ts';
 import type { ConventionRecord, RulesDTO } from './types.ts';
 
 /** A request as the contract writes it (the contract's ExpansionRequest is assignable to it). */
-export interface ExpansionInput extends ModelInput {
+export interface ExpansionInput extends ModelSource {
   readonly legs: readonly string[];
   readonly order: OrderInput;
   readonly through: boolean;

@@ -1,6 +1,5 @@
 import { describe } from '../expansion/describe.ts';
-import { shapeName } from '../expansion/shape.ts';
-import { diagramId } from '../graph/canonical.ts';
+import { diagramId, type Numbering, type TheoryNames } from '../graph/canonical.ts';
 import type { Diagram } from '../graph/diagram.ts';
 import { type CompactDiagram, FLAGS, unpackBody } from './compact.ts';
 import { type LedgerBody, namedLedger } from './ledger.ts';
@@ -19,6 +18,12 @@ function contentOf(diagram: Diagram, kinds: number): number[] {
   return content;
 }
 
+/** The names that an id is made of: fields and coupling monomials. */
+export const namesOf = (named: NamedTheory): TheoryNames => ({
+  fields: named.halves.map(({ field }) => field),
+  couplings: named.kinds.map(({ coupling }) => coupling),
+});
+
 /** Legs, vertices and lines with names: vertices and legs are numbered from 1. */
 function namedParts(named: NamedTheory, legNames: readonly string[], diagram: Diagram) {
   return {
@@ -29,7 +34,11 @@ function namedParts(named: NamedTheory, legNames: readonly string[], diagram: Di
       vertex: at >= 0 ? at + 1 : null,
       ...(at >= 0 ? {} : { joinedTo: -at }),
     })),
-    lines: diagram.lines.map(({ from, to, type }) => ({ from: from + 1, to: to + 1, field: named.halves[type]!.field })),
+    lines: diagram.lines.map(({ from, to, type }) => ({
+      from: from + 1,
+      to: to + 1,
+      field: named.halves[type]!.field,
+    })),
   };
 }
 
@@ -37,14 +46,11 @@ function namedParts(named: NamedTheory, legNames: readonly string[], diagram: Di
 export function namedDiagram(
   named: NamedTheory,
   legNames: readonly string[],
-  diagram: Diagram,
+  diagram: Diagram & { readonly numberings: readonly Numbering[] },
   stored: Omit<CompactDiagram, 'position' | 'body' | 'order'>,
 ): DiagramDTO {
   return {
-    id: diagramId(diagram, named.theory, {
-      fields: named.halves.map(({ field }) => field),
-      kinds: named.kinds.map(({ name }) => name),
-    }),
+    id: diagramId({ bare: stored.label, numberings: diagram.numberings }, namesOf(named)),
     bare: stored.label,
     ...namedParts(named, legNames, diagram),
     order: orderOf(named, contentOf(diagram, named.kinds.length)),
@@ -83,11 +89,7 @@ export const expansionHead = (prepared: Prepared, end: RunEnd): Omit<ExpansionRe
 
 /** "two vertices joined by three lines, …": the picture in words, in the model's names. */
 export const describeDiagram = ({ names }: Prepared, compact: CompactDiagram): string =>
-  describe(
-    unpackBody(compact.body),
-    names.halves.map(({ text }) => text),
-    names.legs,
-  );
+  describe(unpackBody(compact.body), names.theory, { halves: names.halves.map(({ text }) => text), legs: names.legs });
 
 /** Rules of the propagators and vertices that occur in a diagram. */
 export function rulesUsed(prepared: Prepared, compact: CompactDiagram): RulesDTO {
@@ -100,5 +102,3 @@ export function rulesUsed(prepared: Prepared, compact: CompactDiagram): RulesDTO
     vertices: rules.vertices.filter((_, index) => used.has(index)),
   };
 }
-
-export { shapeName };

@@ -4,11 +4,10 @@ import { passesDrop } from '../expansion/filters.ts';
 import { pairingsOf } from '../expansion/pairings.ts';
 import { shapeLabel } from '../expansion/shape.ts';
 import { canonicalLabel } from '../graph/canonical.ts';
-import type { Facts } from '../graph/facts.ts';
 import type { Content, CountingRequest } from '../graph/theory.ts';
 import { balance, type ListSum } from '../ledger/balance.ts';
 import { independentSums, type LedgerSums } from '../ledger/independent.ts';
-import { type CompactDiagram, FLAGS, packBody } from './compact.ts';
+import { type CompactDiagram, factsFlags, packBody } from './compact.ts';
 import { type LedgerBody, ledgerBody } from './ledger.ts';
 import type { Prepared } from './prepare.ts';
 
@@ -44,15 +43,6 @@ class Sums {
   }
 }
 
-function flagsOf(facts: Facts): number {
-  return (
-    (facts.connected ? FLAGS.connected : 0) +
-    (facts.onePI ? FLAGS.onePI : 0) +
-    (facts.hasSelfContraction ? FLAGS.selfContraction : 0) +
-    (facts.hasTadpole ? FLAGS.tadpole : 0)
-  );
-}
-
 /** Kinds of the request that no content uses because the order leaves a coupling of theirs at power 0. */
 function excludedKinds(request: CountingRequest, contents: readonly Content[]): number[] {
   const { order } = request;
@@ -80,17 +70,19 @@ export function* runExpansion(prepared: Prepared): Generator<CompactDiagram, Run
     uncut.add(diagram.content, diagram.symmetryFactor, pairings);
     if (!passesDrop(diagram.facts, request.drop)) continue;
     cut.add(diagram.content, diagram.symmetryFactor, pairings);
+    const { bare, numberings } = canonicalLabel(diagram, request.theory, request.legs);
+    const body = packBody(diagram, numberings);
     yield {
       position: ++position,
-      body: packBody(diagram),
-      label: canonicalLabel(diagram, request.theory).bare,
+      body,
+      label: bare,
       loops: diagram.facts.loops,
       symmetryFactor: `${diagram.symmetryFactor}`,
       weight: format(rational(1n, diagram.symmetryFactor)),
       pairings: `${pairings}`,
       order: diagram.content.join(),
-      shape: shapeLabel(diagram, request),
-      flags: flagsOf(diagram.facts),
+      shape: shapeLabel(diagram, request, body),
+      flags: factsFlags(diagram.facts),
     };
   }
   const compared = balance(proof, cut.rows, uncut.rows);

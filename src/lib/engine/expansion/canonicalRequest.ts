@@ -73,10 +73,9 @@ function candidates(request: CountingRequest): Field[][] {
 
 /** Components of a power order, sorted by how they weigh the kinds in the order given; equal components are equal columns. */
 function sortedComponents(order: Order & { by: 'powers' }, kindOrder: readonly number[]): number[] {
-  const column = (c: number): string => `${format(order.bound[c]!)}/${kindOrder.map((kind) => format(order.weights[kind]![c]!)).join()}`;
-  return order.bound
-    .map((_, c) => c)
-    .sort((a, b) => (column(a) < column(b) ? -1 : column(a) > column(b) ? 1 : 0));
+  const column = (c: number): string =>
+    `${format(order.bound[c]!)}/${kindOrder.map((kind) => format(order.weights[kind]![c]!)).join()}`;
+  return order.bound.map((_, c) => c).sort((a, b) => (column(a) < column(b) ? -1 : column(a) > column(b) ? 1 : 0));
 }
 
 function reorder(order: Order, kindOrder: readonly number[]): Order {
@@ -101,7 +100,11 @@ function kindOrders(request: CountingRequest, typeOrder: readonly number[]): num
   return count > MOST_NUMBERINGS ? [sorted.flat()] : [...products(sorted)];
 }
 
-function renumber(request: CountingRequest, typeOrder: readonly number[], kindOrder: readonly number[]): CountingRequest {
+function renumber(
+  request: CountingRequest,
+  typeOrder: readonly number[],
+  kindOrder: readonly number[],
+): CountingRequest {
   const place = new Map(typeOrder.map((type, at) => [type, at]));
   return {
     theory: {

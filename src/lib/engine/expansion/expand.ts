@@ -21,18 +21,30 @@ function hasOrder({ order }: CountingRequest, content: Content, loops: number): 
 }
 
 /**
+ * The diagrams of a request with one vertex content, in the enumerator's canonical order, after the filters.
+ *
+ * `stop` is asked now and then, also while nothing is found; when it says yes the stream ends early.
+ */
+export function* expandContent(
+  request: CountingRequest,
+  content: Content,
+  stop?: () => boolean,
+): Generator<ExpandedDiagram> {
+  const components = COMPONENTS[request.keep];
+  const options = stop ? { components, stop } : { components };
+  for (const diagram of enumerateContent(request.theory, request.legs, content, options)) {
+    const found = facts(diagram);
+    if (!passesKeep(found, request.keep) || !passesDrop(found, request.drop)) continue;
+    if (hasOrder(request, content, found.loops)) yield { ...diagram, content, facts: found };
+  }
+}
+
+/**
  * Every diagram of a request exactly once, as a stream: contents in order, within a content the enumerator's canonical order,
  * then the filters. Ending the generator early cancels; memory is that of one diagram.
  *
  * @throws InputError infinite-order, LimitError, before the first diagram.
  */
 export function* expandRequest(request: CountingRequest): Generator<ExpandedDiagram> {
-  const components = COMPONENTS[request.keep];
-  for (const content of contents(request)) {
-    for (const diagram of enumerateContent(request.theory, request.legs, content, { components })) {
-      const found = facts(diagram);
-      if (!passesKeep(found, request.keep) || !passesDrop(found, request.drop)) continue;
-      if (hasOrder(request, content, found.loops)) yield { ...diagram, content, facts: found };
-    }
-  }
+  for (const content of contents(request)) yield* expandContent(request, content);
 }

@@ -91,7 +91,10 @@ function boundPowers(request: CountingRequest): { usable: boolean[] } {
   }
   const [culprit] = open;
   if (culprit !== undefined)
-    throw new InfiniteOrder(culprit, 'can be added any number of times without using up what is bounded. Bound a power it carries.');
+    throw new InfiniteOrder(
+      culprit,
+      'can be added any number of times without using up what is bounded. Bound a power it carries.',
+    );
   return { usable };
 }
 
@@ -123,7 +126,11 @@ function byPowers(request: CountingRequest, collector: Collector): void {
       collector.checkVertices(vertices + n);
       content[kind] = n;
       const spent = order.weights[kind]!.map((weight) => multiply(negate(rational(n)), weight));
-      choose(at + 1, left.map((value, c) => add(value, spent[c]!)), vertices + n);
+      choose(
+        at + 1,
+        left.map((value, c) => add(value, spent[c]!)),
+        vertices + n,
+      );
     }
     content[kind] = 0;
   };

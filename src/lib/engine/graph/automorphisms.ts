@@ -95,7 +95,9 @@ export function automorphisms(diagram: Diagram, theory: Theory, legTypes: readon
   const joins = joinsOf(diagram, theory, legTypes);
   const { code } = codesOf(joins, identity(theory.partner.length));
   const legCells = legTypes.map((_, leg) => [leg]);
-  const kindCells = theory.kinds.map((_, kind) => diagram.kinds.flatMap((k, v) => (k === kind ? [joins.external + v] : [])));
+  const kindCells = theory.kinds.map((_, kind) =>
+    diagram.kinds.flatMap((k, v) => (k === kind ? [joins.external + v] : [])),
+  );
   const bundles = bundlesOf(diagram, theory);
   const found = joins.n === 0 ? { generators: [], groupOrder: 1n } : label(joins.n, code, [...legCells, ...kindCells]);
   const ofVertices = found.generators.map((image): Generator => {

@@ -31,7 +31,9 @@ export interface TheoryNames {
 
 function permutations<T>(items: readonly T[]): T[][] {
   if (items.length < 2) return [[...items]];
-  return items.flatMap((item, at) => permutations([...items.slice(0, at), ...items.slice(at + 1)]).map((rest) => [item, ...rest]));
+  return items.flatMap((item, at) =>
+    permutations([...items.slice(0, at), ...items.slice(at + 1)]).map((rest) => [item, ...rest]),
+  );
 }
 
 /** All orders of items that keep ascending keys: ties in every order, unless there are too many of them. */
@@ -41,13 +43,25 @@ function orders<T>(items: readonly T[], key: (item: T) => string): T[][] {
   const sorted = [...groups.keys()].sort().map((name) => groups.get(name)!);
   const count = sorted.reduce((product, group) => group.reduce((p, _, i) => p * (i + 1), product), 1);
   if (count > MOST_NUMBERINGS) return [sorted.flat()];
-  return sorted.reduce<T[][]>((lists, group) => lists.flatMap((list) => permutations(group).map((order) => [...list, ...order])), [[]]);
+  return sorted.reduce<T[][]>(
+    (lists, group) => lists.flatMap((list) => permutations(group).map((order) => [...list, ...order])),
+    [[]],
+  );
 }
 
 /** What is seen of a field without names: real or complex, its legs, how its lines meet vertices of which valence. */
-function fieldKey(type: number, { n, external, joins }: Joins, diagram: Diagram, theory: Theory, legTypes: readonly number[], unlabelled: boolean): string {
+function fieldKey(
+  type: number,
+  { n, external, joins }: Joins,
+  diagram: Diagram,
+  theory: Theory,
+  legTypes: readonly number[],
+  unlabelled: boolean,
+): string {
   const partner = theory.partner[type]!;
-  const legs = legTypes.map((leg, at) => (leg === type ? `${unlabelled ? '' : at}+` : leg === partner ? `${unlabelled ? '' : at}-` : '')).join();
+  const legs = legTypes
+    .map((leg, at) => (leg === type ? `${unlabelled ? '' : at}+` : leg === partner ? `${unlabelled ? '' : at}-` : ''))
+    .join();
   const meets = diagram.kinds.map((kind, v) => {
     const counts = theory.kinds[kind]!;
     const own = joins[(external + v) * n + external + v]!;
@@ -62,7 +76,10 @@ function usedFields(diagram: Diagram, theory: Theory, legTypes: readonly number[
     used.add(Math.min(type, theory.partner[type]!));
   };
   for (const type of legTypes) use(type);
-  for (const kind of diagram.kinds) theory.kinds[kind]!.forEach((count, type) => count > 0 && use(type));
+  for (const kind of diagram.kinds)
+    theory.kinds[kind]!.forEach((count, type) => {
+      if (count > 0) use(type);
+    });
   return [...used].sort((a, b) => a - b);
 }
 
@@ -72,10 +89,20 @@ interface Certified {
 }
 
 /** The certificate under one numbering of fields and kinds. */
-function certify(diagram: Diagram, joins: Joins, theory: Theory, legCells: number[][], numbering: Numbering): Certified {
-  const types = numbering.fields.flatMap((type) => (theory.partner[type] === type ? [type] : [type, theory.partner[type]!]));
+function certify(
+  diagram: Diagram,
+  joins: Joins,
+  theory: Theory,
+  legCells: number[][],
+  numbering: Numbering,
+): Certified {
+  const types = numbering.fields.flatMap((type) =>
+    theory.partner[type] === type ? [type] : [type, theory.partner[type]!],
+  );
   const { code, dictionary } = codesOf(joins, types);
-  const kindCells = numbering.kinds.map((kind) => diagram.kinds.flatMap((k, v) => (k === kind ? [joins.external + v] : [])));
+  const kindCells = numbering.kinds.map((kind) =>
+    diagram.kinds.flatMap((k, v) => (k === kind ? [joins.external + v] : [])),
+  );
   const found = label(joins.n, code, [...legCells, ...kindCells]);
   const shape = types.map((type) => (theory.partner[type] === type ? 'r' : 'c')).join('');
   const cells = [...legCells, ...kindCells].map((cell) => cell.length).join();
@@ -85,7 +112,12 @@ function certify(diagram: Diagram, joins: Joins, theory: Theory, legCells: numbe
   };
 }
 
-function least(diagram: Diagram, theory: Theory, legTypes: readonly number[], unlabelled: boolean): { best: Certified; numberings: Numbering[] } {
+function least(
+  diagram: Diagram,
+  theory: Theory,
+  legTypes: readonly number[],
+  unlabelled: boolean,
+): { best: Certified; numberings: Numbering[] } {
   const joins = joinsOf(diagram, theory, legTypes);
   const key = (type: number): string => fieldKey(type, joins, diagram, theory, legTypes, unlabelled);
   let best: Certified | null = null;
@@ -95,7 +127,9 @@ function least(diagram: Diagram, theory: Theory, legTypes: readonly number[], un
     const kindKey = (kind: number): string =>
       `${types.map((type) => theory.kinds[kind]![type]).join()}|${diagram.kinds.filter((k) => k === kind).length}`;
     const legCells = unlabelled
-      ? [...new Set(types)].map((type) => legTypes.flatMap((leg, at) => (leg === type ? [at] : []))).filter((cell) => cell.length > 0)
+      ? [...new Set(types)]
+          .map((type) => legTypes.flatMap((leg, at) => (leg === type ? [at] : [])))
+          .filter((cell) => cell.length > 0)
       : legTypes.map((_, at) => [at]);
     for (const kinds of orders([...new Set(diagram.kinds)], kindKey)) {
       const certified = certify(diagram, joins, theory, legCells, { fields, kinds });
@@ -134,7 +168,7 @@ function nameTable(numberings: readonly Numbering[], names: TheoryNames): string
 const ascii = (text: string): string => text.replace(/[^\x20-\x7e]/g, (c) => `\\u${c.charCodeAt(0).toString(16)}`);
 
 /** Label and names: the same diagram of the same fields and couplings has the same id in every expansion of any model. */
-export function diagramId(canonical: CanonicalLabel, names: TheoryNames): string {
+export function diagramId(canonical: Pick<CanonicalLabel, 'bare' | 'numberings'>, names: TheoryNames): string {
   return `${canonical.bare}-${digest(ascii(nameTable(canonical.numberings, names)), 10)}`;
 }
 

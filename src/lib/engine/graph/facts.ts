@@ -67,7 +67,13 @@ export function selfContraction({ lines }: Diagram): Culprit | null {
 }
 
 /** The first internal bridge that makes the diagram fall under "tadpoles" (with `loops`: under "scaleless"), or null. */
-function bridgeTadpole(network: Network, bridges: readonly number[], whole: Int32Array, legged: Uint8Array, loops: boolean): Culprit | null {
+function bridgeTadpole(
+  network: Network,
+  bridges: readonly number[],
+  whole: Int32Array,
+  legged: Uint8Array,
+  loops: boolean,
+): Culprit | null {
   for (const line of bridges) {
     if (line >= network.internal) continue;
     if (!legged[whole[network.ends[line]![0]]!]) return { line, vertex: null };
@@ -83,13 +89,20 @@ function bridgeTadpole(network: Network, bridges: readonly number[], whole: Int3
 }
 
 /** The first cut vertex on which a piece with a loop and without legs hangs; in a component without legs any cut vertex. */
-function hangingPiece(network: Network, cutNodes: readonly number[], whole: Int32Array, legged: Uint8Array): Culprit | null {
+function hangingPiece(
+  network: Network,
+  cutNodes: readonly number[],
+  whole: Int32Array,
+  legged: Uint8Array,
+): Culprit | null {
   for (const vertex of cutNodes) {
     if (isExternal(network, vertex)) continue;
     if (!legged[whole[vertex]!]) return { line: null, vertex };
     const { of, count } = componentsOf(network, -1, vertex);
     const nowLegged = componentsWithLegs(network, of, count);
-    const pieces = new Set(network.incident[vertex]!.filter(([, other]) => other !== vertex).map(([, other]) => of[other]!));
+    const pieces = new Set(
+      network.incident[vertex]!.filter(([, other]) => other !== vertex).map(([, other]) => of[other]!),
+    );
     for (const piece of pieces) {
       if (nowLegged[piece]) continue;
       const links = network.incident[vertex]!.filter(([, other]) => other !== vertex && of[other] === piece).length;
@@ -100,7 +113,12 @@ function hangingPiece(network: Network, cutNodes: readonly number[], whole: Int3
 }
 
 /** The culprits of all filters, and the facts. O((V + I)²) at worst, O(V + I) for most diagrams. */
-export function inspect(diagram: Diagram): { facts: Facts; tadpole: Culprit | null; scaleless: Culprit | null; bridge: number | null } {
+export function inspect(diagram: Diagram): {
+  facts: Facts;
+  tadpole: Culprit | null;
+  scaleless: Culprit | null;
+  bridge: number | null;
+} {
   const network = networkOf(diagram);
   const { bridges, cutNodes } = cutsOf(network);
   const { of, count } = componentsOf(network);
@@ -110,7 +128,8 @@ export function inspect(diagram: Diagram): { facts: Facts; tadpole: Culprit | nu
   const self = selfContraction(diagram);
   const bridge = bridges.find((edge) => edge < network.internal) ?? null;
   const tadpole = bridgeTadpole(network, bridges, of, legged, false);
-  const scaleless = self ?? bridgeTadpole(network, bridges, of, legged, true) ?? hangingPiece(network, cutNodes, of, legged);
+  const scaleless =
+    self ?? bridgeTadpole(network, bridges, of, legged, true) ?? hangingPiece(network, cutNodes, of, legged);
   const connected = count === 1;
   return {
     facts: {

@@ -34,7 +34,13 @@ function refine(n: number, code: ArrayLike<number>, cells: number[][]): number[]
       const bySignature = new Map<string, number[]>();
       for (const node of cell) {
         const parts = [`${code[node * n + node]!}`];
-        for (const other of current) parts.push(other.map((to) => code[node * n + to]!).sort((a, b) => a - b).join());
+        for (const other of current)
+          parts.push(
+            other
+              .map((to) => code[node * n + to]!)
+              .sort((a, b) => a - b)
+              .join(),
+          );
         const signature = parts.join(';');
         const same = bySignature.get(signature);
         if (same) same.push(node);
@@ -101,7 +107,12 @@ class Search {
   visit(cells: number[][], prefix: number[], shared: number): number {
     const refined = refine(this.n, this.code, cells);
     const at = refined.findIndex((cell) => cell.length > 1);
-    if (at < 0) return this.leaf(refined.map((cell) => cell[0]!), prefix.length, shared);
+    if (at < 0)
+      return this.leaf(
+        refined.map((cell) => cell[0]!),
+        prefix.length,
+        shared,
+      );
     const onFirst = this.first === null;
     const tried: number[] = [];
     for (const node of [...refined[at]!].sort((a, b) => a - b)) {
