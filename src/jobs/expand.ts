@@ -1,6 +1,6 @@
 import { type ErrorObject, errorObject } from '#contract/errors.ts';
 import type { JobAcknowledgement, JobEnd, JobMessage, JobTask, StoredDiagram } from '#contract/job.ts';
-import { prepare, runExpansion } from './engine.ts';
+import { prepare, runExpansion } from '#engine/index.ts';
 import { misbehave } from './misbehave.ts';
 
 /** Few enough that the server stores them in a few milliseconds, between requests. */

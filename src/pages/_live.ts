@@ -1,6 +1,6 @@
 import type { DrawingDTO } from '#contract/api.ts';
 import { type ErrorObject, errorObject } from '#contract/errors.ts';
-import { expansionRequestSchema, modelSchema } from '#contract/request.ts';
+import { expansionRequestSchema } from '#contract/request.ts';
 import type { DiagramDTO, LedgerDTO, RulesDTO, Summary } from '#contract/result.ts';
 import { validate } from '#contract/validate.ts';
 import { couplingsLatex, grouped, type Question, requestOf } from '#features/home/question.ts';
@@ -8,12 +8,13 @@ import {
   describeDiagram,
   drawingOf,
   estimate,
+  type Prepared,
   prepare,
-  previewModel,
   renderDiagram,
   renderLedger,
+  renderSummary,
   runExpansion,
-} from '#server/engine.ts';
+} from '#engine/index.ts';
 import { errorOf, isAnswer } from '#server/refusal.ts';
 import { runtime } from '#server/runtime.ts';
 import type { Viewer } from '#server/viewer.ts';
@@ -91,17 +92,16 @@ function compute(question: Question): LiveAnswer {
   }
   return {
     state: 'answered',
-    summary: step.value.summary,
+    summary: renderSummary(prepared, step.value.summary),
     ledger: renderLedger(prepared, step.value.ledger),
     rules: prepared.rules,
-    plates: platesOf(question, diagrams),
+    plates: platesOf(prepared, diagrams),
     milliseconds: performance.now() - started,
   };
 }
 
-function platesOf(question: Question, diagrams: readonly LiveDiagram[]): readonly LivePlate[] {
-  const { parameters } = previewModel(validate(modelSchema, { lagrangian: question.lagrangian }));
-  const names = new Map(parameters.map(({ name, latex }) => [name, latex]));
+function platesOf({ model }: Prepared, diagrams: readonly LiveDiagram[]): readonly LivePlate[] {
+  const names = new Map(model.parameters.map(({ name, latex }) => [name, latex]));
   return grouped(diagrams, ({ dto }) => JSON.stringify(dto.order)).map((members) => ({
     latex: couplingsLatex(members[0]!.dto.order, (name) => names.get(name) ?? name),
     diagrams: members,

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import type { StoredDiagram } from '#contract/job.ts';
+import { FLAGS } from '#engine/index.ts';
 import { readCursor } from './cursor.ts';
-import { FLAGS } from './engine.ts';
 import { Refusal } from './refusal.ts';
 
 /** Orders of a diagram list. Every sort ends in the position, so pages neither repeat nor skip a row. */

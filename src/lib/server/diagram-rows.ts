@@ -33,16 +33,19 @@ export function countRows(bodyId: number, clauses: readonly Clause[]): number {
   return all<{ n: number }>(sql, valuesOf(bodyId, clauses))[0]!.n;
 }
 
-/** By position (digits only) or by bare label. */
-export function findRow(bodyId: number, name: string): StoredDiagram | undefined {
-  const isPosition = /^\d{1,9}$/.test(name);
-  const sql = `SELECT ${COLUMNS} FROM diagrams WHERE body_id = ? AND ${isPosition ? 'position' : 'label'} = ?`;
-  return all<StoredDiagram>(sql, [bodyId, isPosition ? Number(name) : name])[0];
+export function rowAt(bodyId: number, position: number): StoredDiagram | undefined {
+  return all<StoredDiagram>(`SELECT ${COLUMNS} FROM diagrams WHERE body_id = ? AND position = ?`, [
+    bodyId,
+    position,
+  ])[0];
 }
 
-export function labelAt(bodyId: number, position: number): string | null {
-  const sql = 'SELECT label FROM diagrams WHERE body_id = ? AND position = ?';
-  return all<{ label: string }>(sql, [bodyId, position])[0]?.label ?? null;
+/** Diagrams that are the same with names forgotten: usually one. */
+export function rowsLabelled(bodyId: number, label: string): StoredDiagram[] {
+  return all(`SELECT ${COLUMNS} FROM diagrams WHERE body_id = ? AND label = ? ORDER BY position LIMIT 200`, [
+    bodyId,
+    label,
+  ]);
 }
 
 /** All rows in order, a page at a time: for downloads of any size. */

@@ -3,9 +3,6 @@ import type { StoredDiagram } from '#contract/job.ts';
 import type { ExpansionRequest } from '#contract/request.ts';
 import type { LedgerDTO } from '#contract/result.ts';
 import { validate } from '#contract/validate.ts';
-import { writeCursor } from './cursor.ts';
-import { beyondClause, conditionsOf, type DiagramFilter, diagramQuerySchema, sortPlan } from './diagram-query.ts';
-import { countRows, findRow, labelAt, selectRows } from './diagram-rows.ts';
 import {
   describeDiagram,
   drawingOf,
@@ -14,7 +11,10 @@ import {
   renderLedger,
   rulesUsed,
   workingOf,
-} from './engine.ts';
+} from '#engine/index.ts';
+import { writeCursor } from './cursor.ts';
+import { beyondClause, conditionsOf, type DiagramFilter, diagramQuerySchema, sortPlan } from './diagram-query.ts';
+import { countRows, rowAt, rowsLabelled, selectRows } from './diagram-rows.ts';
 import type { ExpansionRow } from './expansion-record.ts';
 import { bodyOf, readable } from './expansions.ts';
 import { platesOf } from './plates.ts';
@@ -63,19 +63,31 @@ export function platesPage(viewer: Viewer, id: string, by: GroupBy): { items: Pl
   return platesOf(preparedFor(expansion), bodyOf(expansion), by);
 }
 
-/** One diagram whole, with its working and its neighbours' labels: by bare label or position. @throws Refusal not-found. */
+/** A stored diagram by position (digits only), by id, or by bare label where only one diagram has it. */
+function findDiagram(prepared: Prepared, bodyId: number, name: string): StoredDiagram | undefined {
+  if (/^\d{1,9}$/.test(name)) return rowAt(bodyId, Number(name));
+  const candidates = rowsLabelled(bodyId, name.split('-')[0]!);
+  const named = candidates.find((row) => renderDiagram(prepared, row).id === name);
+  return named ?? (candidates.length === 1 && candidates[0]!.label === name ? candidates[0] : undefined);
+}
+
+/** One diagram whole, with its working and its neighbours' ids. @throws Refusal not-found. */
 export function getDiagram(viewer: Viewer, id: string, name: string): DiagramPageData {
   const expansion = readable(viewer, id);
   const body = bodyOf(expansion);
-  const stored = findRow(body.id, name);
-  if (!stored) throw notFound('diagram');
   const prepared = preparedFor(expansion);
+  const stored = findDiagram(prepared, body.id, name);
+  if (!stored) throw notFound('diagram');
+  const idAt = (position: number): string | null => {
+    const row = rowAt(body.id, position);
+    return row ? renderDiagram(prepared, row).id : null;
+  };
   return {
     ...rowOf(prepared, stored),
     working: workingOf(prepared, stored),
     rulesUsed: rulesUsed(prepared, stored),
-    previous: labelAt(body.id, stored.position - 1),
-    next: labelAt(body.id, stored.position + 1),
+    previous: idAt(stored.position - 1),
+    next: idAt(stored.position + 1),
   };
 }
 

@@ -1,9 +1,9 @@
 import type { ExpansionRecord } from '#contract/api.ts';
 import type { StoredDiagram } from '#contract/job.ts';
+import { type Prepared, renderDiagram } from '#engine/index.ts';
 import { csvHead, csvRow } from './csv.ts';
 import { storedRows } from './diagram-rows.ts';
 import { preparedFor } from './diagrams.ts';
-import { type Prepared, renderDiagram } from './engine.ts';
 import { getExpansion, readable } from './expansions.ts';
 import { notFound, Refusal } from './refusal.ts';
 import type { Viewer } from './viewer.ts';

@@ -2,7 +2,7 @@ import { and, eq, isNull } from 'drizzle-orm';
 import type { Estimate } from '#contract/api.ts';
 import type { ExpansionRequest } from '#contract/request.ts';
 import { expansions } from '#db/schema.ts';
-import { ENGINE_VERSION, estimate, type Prepared, prepare } from './engine.ts';
+import { ENGINE_VERSION, estimate, type Prepared, prepare } from '#engine/index.ts';
 import { sha256 } from './ids.ts';
 import { allowanceOf, may } from './policy.ts';
 import { runtime } from './runtime.ts';

@@ -3,7 +3,7 @@ import type { ExpansionRecord } from '#contract/api.ts';
 import { LIMITS } from '#contract/limits.ts';
 import type { ExpansionRequest } from '#contract/request.ts';
 import { bodies, expansions, jobs } from '#db/schema.ts';
-import { ENGINE_VERSION, estimate, prepare } from './engine.ts';
+import { ENGINE_VERSION, estimate, prepare } from '#engine/index.ts';
 import { contentHashOf, ESTIMATE_MS, refusalReason } from './expansion-cost.ts';
 import { type ExpansionRow, getRow, recordOf } from './expansion-record.ts';
 import { newId, now, sha256, stableJson } from './ids.ts';

@@ -3,7 +3,7 @@ import type { ExpansionRecord } from '#contract/api.ts';
 import type { ErrorObject } from '#contract/errors.ts';
 import type { ExpansionRequest } from '#contract/request.ts';
 import { bodies, expansions } from '#db/schema.ts';
-import { renderLedger, renderSummary } from './engine.ts';
+import { renderLedger, renderSummary } from '#engine/index.ts';
 import { now } from './ids.ts';
 import { may } from './policy.ts';
 import { preparedOf } from './prepared.ts';

@@ -1,5 +1,5 @@
+import { ENGINE_VERSION } from '#engine/index.ts';
 import { type Call, json } from './endpoint.ts';
-import { ENGINE_VERSION } from './engine.ts';
 import { readable } from './expansions.ts';
 import { sha256 } from './ids.ts';
 

@@ -1,8 +1,8 @@
 import type { GroupBy, Plate } from '#contract/api.ts';
 import type { DiagramDTO } from '#contract/result.ts';
 import { add, format, type Rational, rational, ZERO } from '#engine/exact/rational.ts';
-import { findRow } from './diagram-rows.ts';
-import { type Prepared, renderDiagram } from './engine.ts';
+import { type Prepared, renderDiagram } from '#engine/index.ts';
+import { rowAt } from './diagram-rows.ts';
 import { runtime } from './runtime.ts';
 
 /** Grouping by shape can give nearly as many groups as there are diagrams: nobody looks at more than these. */
@@ -72,7 +72,7 @@ function groupsOf(body: Body, by: GroupBy): { groups: Group[]; total: number } {
 }
 
 function firstDiagram(prepared: Prepared, bodyId: number, position: number): DiagramDTO {
-  return renderDiagram(prepared, findRow(bodyId, String(position))!);
+  return renderDiagram(prepared, rowAt(bodyId, position)!);
 }
 
 const LOOPS = ['Tree diagrams', 'One loop', 'Two loops', 'Three loops', 'Four loops', 'Five loops', 'Six loops'];
@@ -89,7 +89,7 @@ function titleOf(
   if (by === 'shape') return { title: `Shape of no. ${first}`, titleLatex: `\\text{Shape of no. }${first}` };
   const powers = Object.entries(firstDiagram(prepared, bodyId, first).order);
   if (powers.length === 0) return { title: 'No coupling', titleLatex: '1' };
-  const latexOf = (name: string) => prepared.names.couplingLatex(name);
+  const latexOf = (name: string) => prepared.model.parameters.find((one) => one.name === name)?.latex ?? name;
   return {
     title: powers.map(([name, power]) => (power === '1' ? name : `${name}^${power}`)).join(' '),
     titleLatex: powers

@@ -1,5 +1,5 @@
 import type { ExpansionRequest } from '#contract/request.ts';
-import { type Prepared, prepare } from './engine.ts';
+import { type Prepared, prepare } from '#engine/index.ts';
 
 const KEPT = 300;
 const cache = new Map<string, Prepared>();

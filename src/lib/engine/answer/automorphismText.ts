@@ -1,4 +1,4 @@
-import { plural } from '../expansion/describe.ts';
+import { capital, plural } from '../expansion/describe.ts';
 import { automorphisms, type Bundle, type Generator } from '../graph/automorphisms.ts';
 import type { Diagram } from '../graph/diagram.ts';
 import type { NamedTheory } from './theory.ts';
@@ -68,13 +68,13 @@ function bundleStep({ from, to, lines, swappable, factor }: Bundle, field: strin
   const m = lines.length;
   if (from !== to)
     return {
-      text: `${plural(m, 'equal line')} of ${field} between vertices ${from + 1} and ${to + 1}: ${m}! exchanges.`,
+      text: `${capital(plural(m, 'equal line'))} of ${field} between vertices ${from + 1} and ${to + 1}: ${m}! exchanges.`,
       latex: `${m}! = ${factor}`,
       factor: `${factor}`,
     };
   const ends = swappable ? `, each with two ends to swap: ${m}!·2^${m}` : `: ${m}!`;
   return {
-    text: `${plural(m, 'self-contraction')} of ${field} at vertex ${from + 1}${ends}.`,
+    text: `${capital(plural(m, 'self-contraction'))} of ${field} at vertex ${from + 1}${ends}.`,
     latex: `${m}!${swappable ? ` \\cdot 2^{${m}}` : ''} = ${factor}`,
     factor: `${factor}`,
   };
@@ -88,9 +88,11 @@ export function automorphismsText(
 ): WorkingDTO['automorphisms'] {
   const found = automorphisms(diagram, named.theory, legTypes);
   const swapped = found.bundles.filter(({ swappable }) => swappable).values();
-  const moved = found.vertexOrder === 1n ? 'only the identity' : `${found.vertexOrder} permutations`;
   const vertexStep: WorkingStep = {
-    text: `Vertices may be permuted by ${moved} that keep legs, kinds and lines.`,
+    text:
+      found.vertexOrder === 1n
+        ? 'No permutation of the vertices but the identity keeps legs, kinds and lines.'
+        : `${found.vertexOrder} permutations of the vertices keep legs, kinds and lines.`,
     latex: `${found.vertexOrder}`,
     factor: `${found.vertexOrder}`,
   };

@@ -1,6 +1,6 @@
 import { format, rational } from '../exact/rational.ts';
 import { type ContractionStep, countContractions } from '../expansion/contractions.ts';
-import { inWords, plural } from '../expansion/describe.ts';
+import { capital, inWords, plural } from '../expansion/describe.ts';
 import type { Diagram } from '../graph/diagram.ts';
 import type { NamedTheory } from './theory.ts';
 import type { WorkingDTO, WorkingStep } from './types.ts';
@@ -35,7 +35,7 @@ function linesStep(step: Extract<ContractionStep, { is: 'lines' }>, named: Named
   const latex = [a, b].filter((n) => n > 1n).map(String);
   if (step.count > 1) latex.push(`${step.count}!`);
   return {
-    text: `${plural(step.count, 'line')} of ${field} between vertices ${step.from + 1} and ${step.to + 1}: ${from}, ${end}, ${rest}.`,
+    text: `${capital(plural(step.count, 'line'))} of ${field} between vertices ${step.from + 1} and ${step.to + 1}: ${from}, ${end}, ${rest}.`,
     latex: `${latex.join(' \\cdot ') || '1'} = ${step.ways}`,
     factor: `${step.ways}`,
   };
@@ -48,7 +48,7 @@ function selfStep(step: Extract<ContractionStep, { is: 'self' }>, named: NamedTh
   const how = real ? `(${2 * step.count} − 1)!!` : `${step.count}!`;
   const latex = [chosen > 1n ? `${chosen}` : '', real ? `(${2 * step.count}-1)!!` : `${step.count}!`].filter(Boolean);
   return {
-    text: `${plural(step.count, 'self-contraction')} of ${half.field} at vertex ${step.vertex + 1}: ${chosen} choice${chosen === 1n ? '' : 's'} of the half-lines, joined in ${how} = ${joined} way${joined === 1n ? '' : 's'}.`,
+    text: `${capital(plural(step.count, 'self-contraction'))} of ${half.field} at vertex ${step.vertex + 1}: ${chosen} choice${chosen === 1n ? '' : 's'} of the half-lines, joined in ${how} = ${joined} way${joined === 1n ? '' : 's'}.`,
     latex: `${latex.join(' \\cdot ')} = ${step.ways}`,
     factor: `${step.ways}`,
   };

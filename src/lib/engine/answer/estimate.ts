@@ -19,7 +19,7 @@ export interface EngineEstimate {
 /** Multiplications that the exact sum may take here: some tens of milliseconds. */
 const SUM_LIMIT = 150_000;
 /** Labels, facts and storage of one diagram in the job process, in milliseconds; measured on a two-core machine. */
-const HANDLING_MS = 0.45;
+const HANDLING_MS = 0.2;
 const BYTES_PER_CLASS = 260;
 const BYTES_PER_LINE = 9;
 /** Nothing grows faster from one order to the next than this, so that a short series is not extrapolated wildly. */

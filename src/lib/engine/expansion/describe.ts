@@ -18,7 +18,7 @@ export const plural = (n: number, noun: string, nouns = `${noun}s`): string =>
 const listed = (parts: readonly string[]): string =>
   parts.length < 2 ? parts.join('') : `${parts.slice(0, -1).join(', ')} and ${parts.at(-1)}`;
 
-const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
+export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 /** "vertices 1 and 2 joined by three lines of φ" for every bundle of equal lines. */
 function joins({ lines }: Diagram, theory: Theory, { halves }: DescriptionNames): string[] {

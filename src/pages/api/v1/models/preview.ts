@@ -1,5 +1,5 @@
 import { modelSchema } from '#contract/request.ts';
 import { endpoint, json } from '#server/endpoint.ts';
-import { previewModel } from '#server/engine.ts';
+import { previewModel } from '#server/preview.ts';
 
 export const { POST, ALL } = endpoint({ POST: async (call) => json(previewModel(await call.body(modelSchema))) });

@@ -1,1 +1,0 @@
-export { prepare, runExpansion } from '../lib/server/engine-interim.ts';
