@@ -89,6 +89,6 @@ export function prepare(input: ExpansionInput): Prepared {
     contents: contents(canonical.request),
     names: { ...permuted(named, canonical), legs },
     rules: modelRules(model),
-    conventions: conventionRecord(input.conventions),
+    conventions: conventionRecord(model.conventions),
   };
 }

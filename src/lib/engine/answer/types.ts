@@ -3,6 +3,10 @@
  * Rationals are strings in lowest terms, integers bare; weight, symmetryFactor and pairings are strings.
  */
 
+import type { ConventionRecord, RulesDTO } from '../rules/types.ts';
+
+export type { ConventionRecord, PropagatorRuleDTO, RuleOrigin, RulesDTO, VertexRuleDTO } from '../rules/types.ts';
+
 export type State = 'complete' | 'none' | 'cut';
 
 export interface Summary {
@@ -38,44 +42,6 @@ export interface LedgerDTO {
   /** When a drop filter has no closed form: the balanced uncut sum this list is cut from. */
   uncut: { weight: string; independentWeight: string; classes: number } | null;
   identities: { left: string; right: string; holds: boolean; text: string }[];
-}
-
-export interface VertexRuleDTO {
-  fields: string[];
-  coupling: string;
-  factor: string;
-  latex: string;
-  /** Each permutation of identical fields' momenta as its own line (derivative vertices). */
-  permutations: string[];
-  terms: { text: string; latex: string; start: number | null; end: number | null }[];
-}
-
-export interface PropagatorRuleDTO {
-  field: string;
-  kind: 'real' | 'complex';
-  factor: string;
-  latex: string;
-  massSquared: string;
-  terms: { text: string; latex: string; start: number | null; end: number | null }[];
-}
-
-export interface RulesDTO {
-  propagators: PropagatorRuleDTO[];
-  vertices: VertexRuleDTO[];
-}
-
-/** Defining equations, not names. */
-export interface ConventionRecord {
-  signature: '+---' | '-+++' | 'euclidean';
-  dimension: string;
-  weight: string;
-  metric: string;
-  fourier: string;
-  couplings: string;
-  generating: string;
-  selfEnergy: string;
-  vertexFunction: string;
-  scheme: string;
 }
 
 export interface DiagramDTO {

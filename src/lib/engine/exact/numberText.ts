@@ -18,6 +18,9 @@ const TEXT: Notation = {
   times: '*',
 };
 
+/** As the Lagrangian language reads numbers. */
+const TYPED: Notation = { ...TEXT, i: 'i' };
+
 const LATEX: Notation = {
   rational: (value) =>
     value.den === 1n
@@ -72,7 +75,7 @@ function product(number: ExactNumber, symbols: string, notation: Notation): stri
   const { minus, text, terms } = write(number, notation);
   if (terms > 1) {
     const whole = signed({ minus, text });
-    return notation === TEXT ? `(${whole})*${symbols}` : `\\left(${whole}\\right) ${symbols}`;
+    return notation !== LATEX ? `(${whole})${notation.times}${symbols}` : `\\left(${whole}\\right) ${symbols}`;
   }
   const joined = text === '1' ? symbols : `${text}${notation.times}${symbols}`;
   return minus ? `-${joined}` : joined;
@@ -80,3 +83,9 @@ function product(number: ExactNumber, symbols: string, notation: Notation): stri
 
 export const productText = (number: ExactNumber, symbols: string): string => product(number, symbols, TEXT);
 export const productLatex = (number: ExactNumber, symbols: string): string => product(number, symbols, LATEX);
+
+/** A number as a Lagrangian is typed: "1/24", "i*sqrt(2)", "1 + sqrt(2)"; `terms` says whether it needs brackets in a product. */
+export const typedNumber = (number: ExactNumber): { minus: boolean; text: string; terms: number } =>
+  write(number, TYPED);
+export const latexNumber = (number: ExactNumber): { minus: boolean; text: string; terms: number } =>
+  write(number, LATEX);

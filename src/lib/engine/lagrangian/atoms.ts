@@ -62,23 +62,32 @@ function readCount(parser: Parser): number {
   return Number(value.num);
 }
 
+function refusePower(parser: Parser, start: number, end: number): never {
+  const piece = parser.source.quote({ start, end });
+  throw parser.fault(
+    `It is not clear whether the power belongs to the field or to its derivative; write (${piece})^2 or ${piece} with the power inside brackets.`,
+    { start, end: parser.token.end },
+    `(${piece})`,
+  );
+}
+
+const opensBrace = (token: Token): boolean => token.kind === 'mark' && token.mark === '{';
+
 /** The operand of ∂: one name, its conjugate, a bracketed expression, or another derivative. No power: ∂φ² is ambiguous. */
 function readOperand(parser: Parser, start: number): Node {
-  const operand = readAtom(parser);
-  let node = operand;
-  while (parser.at('†') || (parser.at('^') && isConjugateMark(parser.next))) {
+  let node = readAtom(parser);
+  for (;;) {
+    const raised = parser.at('^');
+    if (!parser.at('†') && !(raised && (isConjugateMark(parser.next) || opensBrace(parser.next)))) break;
+    const { end } = node;
     parser.accept('^');
+    const braced = parser.accept('{');
+    if (!isConjugateMark(parser.token)) refusePower(parser, start, end);
     parser.take();
+    if (braced && !parser.accept('}')) refusePower(parser, start, end);
     node = { is: 'conjugate', node, start: node.start, end: parser.previous!.end };
   }
-  if (parser.at('^') || parser.at('**') || parser.token.kind === 'superscript') {
-    const piece = parser.source.quote({ start, end: node.end });
-    throw parser.fault(
-      `It is not clear whether the power belongs to the field or to its derivative; write (${piece})^2 or ${piece} with the power inside brackets.`,
-      { start, end: parser.token.end },
-      `(${piece})`,
-    );
-  }
+  if (parser.at('^') || parser.at('**') || parser.token.kind === 'superscript') refusePower(parser, start, node.end);
   return node;
 }
 

@@ -1,0 +1,157 @@
+import { factorial } from '../exact/combinatorics.ts';
+import { type ExactNumber, fromInteger, multiplyNumbers, rationalValue } from '../exact/number.ts';
+import { latexNumber, typedNumber } from '../exact/numberText.ts';
+import { parametersLatex, parametersText } from './kinds.ts';
+import type { CoefficientTerm, FieldFactor, Model, Monomial, Term } from './model.ts';
+import { nameLatex } from './symbols.ts';
+
+/** How a term is written: as text that is typed, or as LaTeX. Both parse back to the same term. */
+interface Style {
+  readonly number: typeof typedNumber;
+  readonly parameters: (parameters: Monomial) => string;
+  readonly name: (factor: FieldFactor) => string;
+  readonly power: (base: string, n: number) => string;
+  readonly derivative: (index: string, upper: boolean) => string;
+  readonly box: string;
+  readonly square: (field: string) => string;
+  readonly indices: readonly string[];
+  /** A coefficient over a denominator. */
+  readonly over: (above: string, below: string) => string;
+  readonly product: string;
+}
+
+const INDICES = ['mu', 'nu', 'rho', 'sigma', 'tau', 'kappa', 'alpha', 'beta', 'gamma', 'delta'];
+
+const TEXT: Style = {
+  number: typedNumber,
+  parameters: parametersText,
+  name: ({ field, conjugate }) => (conjugate ? `${field}^*` : field),
+  power: (base, n) => (base.endsWith('*') ? `(${base})^${n}` : `${base}^${n}`),
+  derivative: (index, upper) => `d${upper ? '^' : '_'}${index}`,
+  box: 'd^2',
+  square: (field) => `(d ${field})^2`,
+  indices: INDICES,
+  over: (above, below) => `${above}/${below}`,
+  product: ' ',
+};
+
+const LATEX: Style = {
+  number: latexNumber,
+  parameters: parametersLatex,
+  name: ({ field, conjugate }) => (conjugate ? `${nameLatex(field)}^{*}` : nameLatex(field)),
+  power: (base, n) => (base.includes('^') ? `(${base})^{${n}}` : `${base}^{${n}}`),
+  derivative: (index, upper) => `\\partial${upper ? '^' : '_'}{\\${index}}`,
+  box: '\\partial^2',
+  square: (field) => `(\\partial ${field})^{2}`,
+  indices: INDICES,
+  over: (above, below) => `\\frac{${above}}{${below}}`,
+  product: '\\,',
+};
+
+const same = (a: FieldFactor, b: FieldFactor): boolean => a.field === b.field && a.conjugate === b.conjugate;
+
+/** Runs of equal plain factors as powers. */
+function plainFactors(factors: readonly FieldFactor[], style: Style): string[] {
+  const runs: { factor: FieldFactor; n: number }[] = [];
+  for (const factor of factors) {
+    const last = runs.at(-1);
+    if (last && same(last.factor, factor)) last.n++;
+    else runs.push({ factor, n: 1 });
+  }
+  return runs.map(({ factor, n }) => (n === 1 ? style.name(factor) : style.power(style.name(factor), n)));
+}
+
+/** The fields of a term with their derivatives: "h^2 (d s)^2", "phi d_mu h d^mu s", "phi d^2 phi". */
+function fieldsOf({ factors, derivatives }: Term, style: Style): string {
+  const [only] = derivatives;
+  const under = new Set(derivatives.flat());
+  const plain = plainFactors(
+    factors.filter((_, at) => !under.has(at)),
+    style,
+  );
+  if (derivatives.length === 1 && only![0] !== only![1]) {
+    const [a, b] = [factors[only![0]]!, factors[only![1]]!];
+    if (same(a, b) && !a.conjugate) return [...plain, style.square(style.name(a))].join(style.product);
+  }
+  const operators: string[][] = factors.map(() => []);
+  derivatives.forEach(([i, j], at) => {
+    if (i === j) operators[i]!.unshift(style.box);
+    else {
+      operators[i]!.push(style.derivative(style.indices[at]!, false));
+      operators[j]!.push(style.derivative(style.indices[at]!, true));
+    }
+  });
+  const derived = factors.flatMap((factor, at) =>
+    under.has(at) ? [`${operators[at]!.join(' ')} ${style.name(factor)}`] : [],
+  );
+  return [...plain, ...derived].join(style.product);
+}
+
+/** n! of the one field that a term holds three times or more without derivatives: how the coefficient is written on paper. */
+function paperFactorial({ factors, derivatives }: Term): number | null {
+  if (derivatives.length > 0 || factors.length < 3) return null;
+  return factors.every((factor) => same(factor, factors[0]!)) ? factors.length : null;
+}
+
+/** A number times parameters over what stands below the line. */
+function coefficientOf(number: ExactNumber, parameters: Monomial, below: string | null, style: Style) {
+  const { minus: negative, text, terms } = style.number(number);
+  const minus = negative && terms === 1;
+  const symbols = parameters.size === 0 ? '' : style.parameters(parameters);
+  const bracketed = terms > 1 ? `(${negative ? '-' : ''}${text})` : text;
+  const above = symbols === '' ? bracketed : bracketed === '1' ? symbols : `${bracketed}${style.product}${symbols}`;
+  return { minus, text: below === null ? above : style.over(above, below) };
+}
+
+function written(term: Term, style: Style): { minus: boolean; text: string } {
+  const n = paperFactorial(term);
+  const fields = fieldsOf(term, style);
+  if (n !== null) {
+    const number = multiplyNumbers(term.number, fromInteger(factorial(n)));
+    const size = rationalValue(number)?.num;
+    if ((size === 1n || size === -1n) && term.parameters.size > 0 && rationalValue(number)!.den === 1n) {
+      const { minus, text } = coefficientOf(number, term.parameters, `${n}!`, style);
+      return { minus, text: `${text} ${fields}` };
+    }
+  }
+  const { minus, text } = coefficientOf(term.number, term.parameters, null, style);
+  return { minus, text: text === '1' ? fields : `${text} ${fields}` };
+}
+
+function sum(terms: readonly Term[], style: Style): string {
+  return terms
+    .map((term, at) => {
+      const { minus, text } = written(term, style);
+      return at === 0 ? `${minus ? '-' : ''}${text}` : `${minus ? '-' : '+'} ${text}`;
+    })
+    .join(' ');
+}
+
+/** All terms of a model: quadratic parts of the fields, then the vertices. */
+const allTerms = ({ propagators, kinds }: Model): Term[] => [
+  ...propagators.flatMap(({ terms }) => terms),
+  ...kinds.flatMap(({ terms }) => terms),
+];
+
+/** One term as it is typed: "-lambda/4! phi^4". */
+export const termText = (term: Term): string => sum([term], TEXT);
+export const termLatex = (term: Term): string => sum([term], LATEX);
+
+/** The normal form as a text that parses to the same model. */
+export const modelText = (model: Model): string => sum(allTerms(model), TEXT);
+/** The normal form in LaTeX that parses to the same model. */
+export const modelLatex = (model: Model): string => sum(allTerms(model), LATEX);
+
+function coefficientSum(terms: readonly CoefficientTerm[], style: Style): string {
+  if (terms.length === 0) return '0';
+  return terms
+    .map(({ number, parameters }, at) => {
+      const { minus, text } = coefficientOf(number, parameters, null, style);
+      return at === 0 ? `${minus ? '-' : ''}${text}` : `${minus ? '-' : '+'} ${text}`;
+    })
+    .join(' ');
+}
+
+/** A sum of numbers times parameters, such as a mass squared: "m^2 + 1/2 lambda*v^2". */
+export const coefficientText = (terms: readonly CoefficientTerm[]): string => coefficientSum(terms, TEXT);
+export const coefficientLatex = (terms: readonly CoefficientTerm[]): string => coefficientSum(terms, LATEX);
