@@ -64,8 +64,11 @@ const fraction = (text: string): number => {
   return Number(numerator) / Number(denominator);
 };
 
-/** Two-point function of the quartic model to third order: disconnected pieces included, so there is something to filter. */
-const MIXED = request({ total: 3 }, ['phi', 'phi'], { keep: 'normalised' });
+/** Two-point function of a cubic and quartic model through third order: disconnected pieces included, so there is something to filter. */
+const MIXED = {
+  ...request({ total: 3 }, ['phi', 'phi'], { keep: 'normalised', through: true }),
+  lagrangian: '1/2 (d phi)^2 - 1/2 m^2 phi^2 - g/3! phi^3 - lambda/4! phi^4',
+};
 
 describe('an expansion', () => {
   it('is accepted, computed, proven and stored', async () => {
@@ -96,7 +99,7 @@ describe('an expansion', () => {
     const first = await expand(member, MIXED);
     const renamed = {
       ...MIXED,
-      lagrangian: '- g/4! chi^4 - 1/2 M^2 chi^2 + 1/2 (d chi)^2',
+      lagrangian: '- g/4! chi^4 - y/3! chi^3 - 1/2 M^2 chi^2 + 1/2 (d chi)^2',
       legs: ['chi', 'chi'],
     };
     const second = await expand(member, renamed);
@@ -202,8 +205,9 @@ describe('the list of diagrams', () => {
     expect(items.reduce((sum, plate) => sum + fraction(plate.weight), 0)).toBeCloseTo(fraction(ledger!.weight), 10);
   });
 
-  it('leads from one diagram to the next, by label and by position', async () => {
+  it('leads from one diagram to the next, by id and by position', async () => {
     const first = (await (await member.get(`/api/v1/expansions/${id}/diagrams/1`)).json()) as {
+      id: string;
       bare: string;
       previous: null;
       next: string;
@@ -211,7 +215,7 @@ describe('the list of diagrams', () => {
     expect(first.previous).toBeNull();
     const address = `/api/v1/expansions/${id}/diagrams/${encodeURIComponent(first.next)}`;
     const second = await member.get(address);
-    expect(await second.json()).toMatchObject({ position: 2, previous: first.bare, working: { agree: true } });
+    expect(await second.json()).toMatchObject({ position: 2, previous: first.id, working: { agree: true } });
     const again = await member.fetch(address, { headers: { 'if-none-match': second.headers.get('etag')! } });
     expect(again.status).toBe(304);
     expect((await member.get(`/api/v1/expansions/${id}/diagrams/no-such-label`)).status).toBe(404);

@@ -8,7 +8,7 @@
 export type { CompactDiagram } from './answer/compact.ts';
 export { FLAGS } from './answer/compact.ts';
 export { answerDiagram } from './answer/diagram.ts';
-export { drawingOf, pictureOf } from './answer/drawing.ts';
+export { drawingOf } from './answer/drawing.ts';
 export { type EngineEstimate, estimate } from './answer/estimate.ts';
 export type { LedgerBody } from './answer/ledger.ts';
 export { orderWords } from './answer/order.ts';

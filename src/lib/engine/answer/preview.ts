@@ -1,5 +1,6 @@
 import type { InputError, LimitError } from '../errors.ts';
 import { format, ONE } from '../exact/rational.ts';
+import { modelChecks } from '../lagrangian/checks.ts';
 import type { ModelSource } from '../lagrangian/input.ts';
 import { couplingDimensions, fieldDimension, parameterDimensions } from '../lagrangian/massDimension.ts';
 import type { Model, Note } from '../lagrangian/model.ts';
@@ -111,7 +112,7 @@ export function previewModel(source: ModelSource): EnginePreview {
     fields: fieldsOf(model, new Set(declared)),
     parameters: parametersOf(model),
     rules: modelRules(model),
-    checks: [],
+    checks: modelChecks(model).map(({ code, title, verdict, text }) => ({ code, title, verdict, text })),
     notes: model.notes.map(note),
   };
 }
