@@ -1,13 +1,16 @@
 import type { Frame } from './frame.ts';
+import { Orbits } from './orbits.ts';
 
 /** Nodes of the search tree that a test of unfinished rows may visit before it lets them pass. */
 const PREFIX_BUDGET = 400;
 /** Visits after which the automorphisms found so far are used to skip equivalent choices. */
 const PATIENCE = 64;
 
-const LESS = -1;
-const EQUAL = 0;
-const GREATER = 1;
+/** Verdicts on a choice: all renumberings below give smaller matrices; the same; one gives a larger; not known yet. */
+const LESS = 0;
+const EQUAL = 1;
+const GREATER = 2;
+const UNKNOWN = 3;
 
 /**
  * Is the matrix the largest of all its renumberings, read row by row? And how many renumberings leave it as it is?
@@ -15,6 +18,9 @@ const GREATER = 1;
  * A renumbering is built place by place: the node put at place d must have, after sorting within the runs of columns made by
  * the places before, the same row as the matrix has at d. A larger row refutes canonicity, a smaller one ends the branch.
  * Runs are permuted as sets, so no order within a run is tried before a row tells its members apart.
+ *
+ * Renumberings are sorted by the first place d that they change and the node v put there. What is known of (d, v) is kept
+ * while the rows it rests on stand, so a test looks only into what is still undecided.
  *
  * The group is counted along the chain of stabilisers of places 0, 1, 2, …, from its end: an orbit for each place, one
  * automorphism for each new member of an orbit, equivalent choices skipped.
@@ -29,36 +35,58 @@ export class Canonicity {
 
   private readonly order: Int32Array;
   private readonly values: Int32Array;
-  private readonly parent: Int32Array;
-  private readonly tried: Uint8Array;
-  private generators: Int32Array[] = [];
+  private readonly image: Int32Array;
+  private readonly orbits: Orbits;
+  /** verdict[d·n + v] when row v was finished; a later LESS holds while row closedBy still has version closedAt. */
+  private readonly verdict: Uint8Array;
+  private readonly closedBy: Int32Array;
+  private readonly closedAt: Int32Array;
+  private readonly version: Int32Array;
   private visits = 0;
 
   constructor(private readonly frame: Frame) {
     const { n } = frame;
     this.order = new Int32Array((n + 1) * n);
     this.values = new Int32Array(n);
-    this.parent = new Int32Array(n);
-    this.tried = new Uint8Array(n);
+    this.image = Int32Array.from({ length: n }, (_, v) => v);
+    this.orbits = new Orbits(n);
+    this.verdict = new Uint8Array(n * n);
+    this.closedBy = new Int32Array(n * n);
+    this.closedAt = new Int32Array(n * n);
+    this.version = new Int32Array(n);
     this.orbitSizes = new Int32Array(n);
   }
 
-  /** Whether rows 0…rows−1 may begin a canonical matrix; a cheap test that may say yes too often, never no. */
+  /** Takes note of the finished row r; false when it is larger than an earlier one in whose place it could stand. */
+  enter(r: number): boolean {
+    const { n, external, runEnd } = this.frame;
+    for (let row = r; row < n; row++) this.version[row]!++;
+    for (let d = external; d < r; d++) {
+      const at = d * n + r;
+      if (runEnd[d * n + d]! <= r) continue;
+      this.placeIdentity(d);
+      const verdict = this.compare(d, r);
+      if (verdict === GREATER) {
+        this.restsOn = r;
+        return false;
+      }
+      this.verdict[at] = verdict;
+      this.closedAt[at] = 0;
+    }
+    return true;
+  }
+
+  /** Whether rows 0…rows−1 may begin a canonical matrix; may say yes too often, never no. */
   mayBegin(rows: number): boolean {
     const { n, external, runEnd } = this.frame;
     this.visits = 0;
     for (let d = external; d < rows; d++) {
       const end = Math.min(runEnd[d * n + d]!, rows);
-      if (end === d + 1) continue;
-      this.placeIdentity(d);
       for (let v = d + 1; v < end; v++) {
-        const result = this.compare(d, v);
-        if (result === LESS) continue;
-        const found = result === GREATER ? this.refute(d, v) : this.visit(d + 1, rows, false);
-        if (found === GREATER) {
-          this.restsOn = Math.max(this.restsOn, v);
-          return false;
-        }
+        if (this.isLess(d, v)) continue;
+        const verdict = this.explore(d, v, rows);
+        if (verdict === GREATER) return false;
+        if (verdict === LESS) this.remember(d, v, rows - 1);
       }
     }
     return true;
@@ -68,9 +96,8 @@ export class Canonicity {
   isCanonical(): boolean {
     const { n, external, runEnd } = this.frame;
     this.visits = 0;
-    this.generators.length = 0;
+    this.orbits.clear();
     this.orbitSizes.fill(1);
-    for (let v = 0; v < n; v++) this.parent[v] = v;
     for (let d = n - 2; d >= external; d--) {
       const end = runEnd[d * n + d]!;
       if (end > d + 1 && !this.countOrbit(d, end)) return false;
@@ -78,66 +105,85 @@ export class Canonicity {
     return true;
   }
 
-  /** Orbit of place d under the renumberings that fix the places before it; false when a larger matrix turns up. */
-  private countOrbit(d: number, end: number): boolean {
-    const { n } = this.frame;
-    this.placeIdentity(d);
-    this.tried.fill(0);
-    for (let v = d + 1; v < end; v++) {
-      const root = this.find(v);
-      if (root === this.find(d) || this.tried[root]) continue;
-      const result = this.compare(d, v);
-      const found = result === EQUAL ? this.visit(d + 1, n, true) : result;
-      if (found === GREATER) {
-        if (result === GREATER) this.refute(d, v);
-        this.restsOn = Math.max(this.restsOn, v);
-        return false;
-      }
-      if (found === EQUAL) this.merge(d, v);
-      else this.tried[root] = 1;
-    }
-    let size = 1;
-    for (let v = d + 1; v < end; v++) if (this.find(v) === this.find(d)) size++;
-    this.orbitSizes[d] = size;
-    return true;
+  private isLess(d: number, v: number): boolean {
+    const at = d * this.frame.n + v;
+    if (this.verdict[at] === LESS) return true;
+    const closed = this.closedAt[at]!;
+    return closed > 0 && this.version[this.closedBy[at]!] === closed;
   }
 
-  private refute(d: number, v: number): number {
-    this.restsOn = Math.max(d, v);
-    return GREATER;
+  private remember(d: number, v: number, row: number): void {
+    const at = d * this.frame.n + v;
+    this.closedBy[at] = row;
+    this.closedAt[at] = this.version[row]!;
+  }
+
+  /** Verdict on all renumberings that change no place before d and put node v, whose row is equal, at d. */
+  private explore(d: number, v: number, rows: number): number {
+    this.placeIdentity(d);
+    this.compare(d, v);
+    this.image[d] = v;
+    const verdict = this.visit(d + 1, rows);
+    this.image[d] = d;
+    if (verdict === GREATER && v > this.restsOn) this.restsOn = v;
+    return verdict;
+  }
+
+  /** Orbit of place d under the renumberings that fix the places before it; false when a larger matrix turns up. */
+  private countOrbit(d: number, end: number): boolean {
+    const { orbits } = this;
+    const { n } = this.frame;
+    let size = 1;
+    for (let v = d + 1; v < end; v++) {
+      if (this.isLess(d, v)) continue;
+      if (orbits.joined(d, v)) {
+        size++;
+        continue;
+      }
+      const verdict = this.explore(d, v, n);
+      if (verdict === GREATER) return false;
+      if (verdict === EQUAL) size++;
+      else this.remember(d, v, n - 1);
+    }
+    this.orbitSizes[d] = size;
+    return true;
   }
 
   private placeIdentity(d: number): void {
     const { n } = this.frame;
     const base = d * n;
-    for (let p = 0; p < n; p++) this.order[base + p] = p;
+    for (let p = d; p < n; p++) this.order[base + p] = p;
   }
 
-  /**
-   * Choices for place d. counting: EQUAL as soon as one automorphism is found; else unfinished rows end the branch.
-   * Otherwise LESS: no automorphism here.
-   */
-  private visit(d: number, rows: number, counting: boolean): number {
+  /** Choices for place d; EQUAL as soon as one automorphism is found. */
+  private visit(d: number, rows: number): number {
     const { n, runEnd } = this.frame;
-    if (d === rows) return counting ? this.record() : LESS;
-    if (++this.visits > PREFIX_BUDGET && !counting) return LESS;
-    const { order } = this;
+    if (d === rows) return rows === n ? this.record() : UNKNOWN;
+    if (++this.visits > PREFIX_BUDGET && rows < n) return UNKNOWN;
+    const { order, image } = this;
     const base = d * n;
     const end = runEnd[base + d]!;
-    const careful = counting && this.visits > PATIENCE && end > d + 2 && this.generators.length > 0;
-    const skip = careful ? this.fixingOrbits(d) : null;
+    const careful = rows === n && this.visits > PATIENCE && end > d + 1 && this.orbits.found.length > 0;
+    const tried = careful ? this.orbits.fixing(image, d) : null;
+    let result = LESS;
     for (let at = d; at < end; at++) {
       const v = order[base + at]!;
-      if (v >= rows) continue;
-      if (skip?.has(order[base + at]!, at - d)) continue;
-      const result = this.compare(d, at);
-      if (result === LESS) continue;
-      const found = result === GREATER ? this.refute(d, v) : this.visit(d + 1, rows, counting);
-      if (found === LESS) continue;
-      if (found === GREATER && v > this.restsOn) this.restsOn = v;
-      return found;
+      if (v >= rows) {
+        result = UNKNOWN;
+        continue;
+      }
+      if (tried?.seen(v)) continue;
+      let verdict = this.compare(d, at);
+      if (verdict === EQUAL) {
+        image[d] = v;
+        verdict = this.visit(d + 1, rows);
+        image[d] = d;
+      } else if (verdict === GREATER) this.restsOn = d;
+      if (verdict === GREATER && v > this.restsOn) this.restsOn = v;
+      if (verdict === EQUAL || verdict === GREATER) return verdict;
+      if (verdict === UNKNOWN) result = UNKNOWN;
     }
-    return LESS;
+    return result;
   }
 
   /** Row of the node at place `at` if it is moved to place d, against row d of the matrix; fills the order for place d + 1. */
@@ -169,55 +215,12 @@ export class Canonicity {
         if (difference !== 0) return difference > 0 ? GREATER : LESS;
       }
     }
-    order[next + d] = v;
-    for (let p = 0; p < d; p++) order[next + p] = order[base + p]!;
     return EQUAL;
   }
 
   /** The renumbering just completed is an automorphism. */
   private record(): number {
-    const { n } = this.frame;
-    const image = this.order.slice(n * n, n * n + n);
-    this.generators.push(image);
-    for (let p = 0; p < n; p++) if (image[p] !== p) this.merge(p, image[p]!);
+    this.orbits.add(this.image.slice());
     return EQUAL;
-  }
-
-  private find(v: number): number {
-    const { parent } = this;
-    let root = v;
-    while (parent[root] !== root) root = parent[root]!;
-    return root;
-  }
-
-  private merge(a: number, b: number): void {
-    const x = this.find(a);
-    const y = this.find(b);
-    if (x !== y) this.parent[Math.max(x, y)] = Math.min(x, y);
-  }
-
-  /** Orbits of the found automorphisms that fix the nodes at places 0…d−1; has(v, k): v is equivalent to an earlier choice. */
-  private fixingOrbits(d: number): { has(v: number, k: number): boolean } {
-    const { n } = this.frame;
-    const { order } = this;
-    const label = Int32Array.from({ length: n }, (_, v) => v);
-    const find = (v: number): number => (label[v] === v ? v : find(label[v]!));
-    for (const image of this.generators) {
-      let fixes = true;
-      for (let p = 0; p < d && fixes; p++) fixes = image[order[d * n + p]!] === order[d * n + p];
-      if (!fixes) continue;
-      image.forEach((to, from) => {
-        label[find(to)] = find(from);
-      });
-    }
-    const seen = new Set<number>();
-    return {
-      has: (v) => {
-        const root = find(v);
-        if (seen.has(root)) return true;
-        seen.add(root);
-        return false;
-      },
-    };
   }
 }

@@ -1,45 +1,49 @@
 import type { Components, Frame } from './frame.ts';
 
-/**
- * Components of the part made by the finished rows: labels[r·n + v] after rows 0…r−1, each label the least node of its
- * component.
- */
-export class ComponentTrack {
-  private readonly labels: Int32Array;
+/** Notices a component that is finished too early: in `connected` one that is not everything, in `noVacuum` one without a point. */
+export class ComponentTest {
+  private readonly seen: Uint8Array;
+  private readonly stack: Int32Array;
 
   constructor(
     private readonly frame: Frame,
     private readonly components: Components,
   ) {
-    const { n } = frame;
-    this.labels = new Int32Array((n + 1) * n);
-    for (let v = 0; v < n; v++) this.labels[v] = v;
+    this.seen = new Uint8Array(frame.n);
+    this.stack = new Int32Array(frame.n);
   }
 
-  /** Takes in row r; false when the component of r has no half-line left and is one that is not admitted. O(n · lines of r). */
-  close(r: number, left: Int32Array): boolean {
-    const { n, external, matrix } = this.frame;
-    const { labels } = this;
-    const base = r * n;
-    const next = base + n;
-    for (let v = 0; v < n; v++) labels[next + v] = labels[base + v]!;
-    for (let v = r + 1; v < n; v++) {
-      if (matrix[base + v] === 0) continue;
-      const a = labels[next + r]!;
-      const b = labels[next + v]!;
-      if (a === b) continue;
-      const low = Math.min(a, b);
-      for (let u = 0; u < n; u++) if (labels[next + u] === a || labels[next + u] === b) labels[next + u] = low;
-    }
+  /**
+   * Whether the component of the finished row r is still open or may stand. open: half-lines left at each node. O(n²) for a
+   * component that has closed, O(n) for most others.
+   */
+  admits(r: number, open: Int32Array): boolean {
+    const { n, matrix } = this.frame;
     if (this.components === 'any') return true;
-    const own = labels[next + r]!;
-    if (this.components === 'noVacuum' && own < external) return true;
-    let members = 0;
-    for (let v = 0; v < n; v++) {
-      if (labels[next + v] !== own) continue;
-      if (left[v]! > 0) return true;
-      members++;
+    // Where a component had closed before the last row, it was refused then.
+    if (this.components === 'connected' && r === n - 1) return true;
+    for (let v = r + 1; v < n; v++) if (matrix[r * n + v] !== 0 && open[v]! > 0) return true;
+    return this.flood(r, open);
+  }
+
+  private flood(r: number, open: Int32Array): boolean {
+    const { n, external, matrix } = this.frame;
+    const { seen, stack } = this;
+    const noVacuum = this.components === 'noVacuum';
+    seen.fill(0);
+    stack[0] = r;
+    seen[r] = 1;
+    let members = 1;
+    for (let size = 1; size > 0; ) {
+      const v = stack[--size]!;
+      if (open[v]! > 0 || (noVacuum && v < external)) return true;
+      for (let u = 0; u < n; u++) {
+        if (matrix[v * n + u] === 0 || seen[u] === 1) continue;
+        seen[u] = 1;
+        members++;
+        stack[size++] = u;
+      }
     }
-    return this.components === 'connected' && members === n;
+    return !noVacuum && members === n;
   }
 }

@@ -1,3 +1,4 @@
+import { factorial } from '../../exact/combinatorics.ts';
 import type { CountedDiagram, Line } from '../../graph/diagram.ts';
 import type { Theory } from '../../graph/theory.ts';
 import type { Frame } from './frame.ts';
@@ -5,83 +6,102 @@ import type { Frame } from './frame.ts';
 /** Products of small integers stay exact numbers below this. */
 const SAFE = 2 ** 53;
 
-/** Turns finished matrices into diagrams: lines, legs, and |Aut| = |vertex automorphisms| · ∏ m! · ∏ l! 2^l. */
+/** What one join code between vertices i ≤ j stands for. */
+interface Bundle {
+  /** ∏ m! over equal lines, ∏ l! 2^l over self-contractions of a real field. */
+  readonly factor: number;
+  readonly lines: readonly { readonly type: number; readonly count: number; readonly reversed: boolean }[];
+}
+
+/** Turns finished matrices into diagrams with |Aut| = |vertex automorphisms| · ∏ m! · ∏ l! 2^l. */
 export class Emitter {
-  private readonly lineOf = new Map<number, Line>();
+  private readonly between: readonly Bundle[];
+  private readonly own: readonly Bundle[];
+  /** Lines are values: one object for each (from, to, type) that occurs. */
+  private readonly lineOf: Line[] = [];
+  private readonly scratch: Line[] = [];
   private readonly types: number;
 
+  /** used: the type of the theory behind each type of the frame's table. */
   constructor(
     private readonly frame: Frame,
-    private readonly theory: Theory,
-    /** Type of the theory behind each type of the table. */
-    private readonly used: readonly number[],
+    theory: Theory,
+    used: readonly number[],
   ) {
+    const bundle = (counts: readonly number[], own: boolean) => bundleOf(counts, own, used, theory);
+    this.between = frame.table.counts.map((counts) => bundle(counts, false));
+    this.own = frame.table.selfCounts.map((counts) => bundle(counts, true));
     this.types = theory.partner.length;
   }
 
+  /** The diagram of the matrix as it stands; its arrays are its own. O(n²). */
   diagram(orbitSizes: Int32Array): CountedDiagram {
     const { n, external, matrix, kinds } = this.frame;
-    const legs = new Array<number>(external);
-    const lines: Line[] = [];
-    const factors: number[] = [];
-    for (const size of orbitSizes) if (size > 1) factors.push(size);
-    for (let i = 0; i < n; i++) {
-      for (let j = Math.max(i, external); j < n; j++) {
+    let small = 1;
+    let large = 1n;
+    const times = (factor: number): void => {
+      if (small * factor >= SAFE) {
+        large *= BigInt(small);
+        small = 1;
+      }
+      small *= factor;
+    };
+    for (let v = external; v < n; v++) if (orbitSizes[v]! > 1) times(orbitSizes[v]!);
+    let count = 0;
+    for (let i = external; i < n; i++)
+      for (let j = i; j < n; j++) {
         const code = matrix[i * n + j]!;
         if (code === 0) continue;
-        if (i < external) legs[i] = j - external;
-        else this.addLines(lines, factors, i - external, j - external, code);
+        const bundle = (i === j ? this.own : this.between)[code]!;
+        if (bundle.factor > 1) times(bundle.factor);
+        count = this.addLines(bundle, i - external, j - external, count);
       }
-      for (let j = i + 1; j < external; j++) {
-        if (matrix[i * n + j] === 0) continue;
-        legs[i] = -1 - j;
-        legs[j] = -1 - i;
-      }
+    const symmetryFactor = large === 1n ? BigInt(small) : large * BigInt(small);
+    return { kinds, legs: this.legs(), lines: this.scratch.slice(0, count), symmetryFactor };
+  }
+
+  private legs(): number[] {
+    const { n, external, matrix } = this.frame;
+    const legs: number[] = [];
+    for (let i = 0; i < external; i++) {
+      let j = 0;
+      while (matrix[i * n + j] === 0) j++;
+      legs.push(j < external ? -1 - j : j - external);
     }
-    return { kinds, legs, lines, symmetryFactor: product(factors) };
+    return legs;
   }
 
-  private addLines(lines: Line[], factors: number[], i: number, j: number, code: number): void {
-    const { table } = this.frame;
-    const counts = (i === j ? table.selfCounts : table.counts)[code]!;
-    counts.forEach((count, at) => {
-      if (count === 0) return;
-      const type = this.used[at]!;
-      const partner = this.theory.partner[type]!;
-      const real = partner === type;
-      if (i === j && partner < type) return;
-      const multiplicity = real && i === j ? count / 2 : count;
-      // A half-line φ at i is the `to` end of a complex line; a half-line φ* is its `from` end.
-      const [from, to] = !real && type < partner ? [j, i] : [i, j];
-      const line = this.line(from, to, Math.min(type, partner));
-      for (let k = 1; k <= multiplicity; k++) {
-        lines.push(line);
-        if (k > 1) factors.push(k);
-        if (real && i === j) factors.push(2);
-      }
-    });
+  private addLines(bundle: Bundle, i: number, j: number, count: number): number {
+    let at = count;
+    for (const { type, count: lines, reversed } of bundle.lines) {
+      const line = reversed ? this.line(j, i, type) : this.line(i, j, type);
+      for (let k = 0; k < lines; k++) this.scratch[at++] = line;
+    }
+    return at;
   }
 
-  /** Lines are values: one object for each that occurs. */
   private line(from: number, to: number, type: number): Line {
     const key = (from * this.frame.n + to) * this.types + type;
-    const known = this.lineOf.get(key);
-    if (known) return known;
+    const known = this.lineOf[key];
+    if (known !== undefined) return known;
     const line = { from, to, type };
-    this.lineOf.set(key, line);
+    this.lineOf[key] = line;
     return line;
   }
 }
 
-function product(factors: readonly number[]): bigint {
-  let small = 1;
-  let large = 1n;
-  for (const factor of factors) {
-    if (small * factor >= SAFE) {
-      large *= BigInt(small);
-      small = 1;
-    }
-    small *= factor;
-  }
-  return large * BigInt(small);
+function bundleOf(counts: readonly number[], own: boolean, used: readonly number[], theory: Theory): Bundle {
+  let factor = 1;
+  const lines = counts.flatMap((halfLines, at) => {
+    const type = used[at]!;
+    const partner = theory.partner[type]!;
+    const loop = own && partner === type;
+    // A self-contraction of a complex field counts under both of its types.
+    if (halfLines === 0 || (own && partner < type)) return [];
+    const count = loop ? halfLines / 2 : halfLines;
+    factor *= Number(factorial(count)) * (loop ? 2 ** count : 1);
+    // A half-line φ at i is the `to` end of a complex line, a half-line φ* its `from` end.
+    return [{ type: Math.min(type, partner), count, reversed: type < partner }];
+  });
+  return { factor, lines };
 }

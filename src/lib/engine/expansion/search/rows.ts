@@ -1,5 +1,5 @@
 import { Canonicity } from './canonicity.ts';
-import { ComponentTrack } from './components.ts';
+import { ComponentTest } from './components.ts';
 import type { Components, Frame } from './frame.ts';
 
 /** Steps between two questions whether to stop. */
@@ -17,7 +17,7 @@ const STEPS_BETWEEN = 4096;
  */
 export class RowSearch {
   readonly canonicity: Canonicity;
-  private readonly track: ComponentTrack;
+  private readonly component: ComponentTest;
   /** Half-lines left at each node: packed by type, and their number. */
   private readonly left: Int32Array;
   private readonly open: Int32Array;
@@ -36,7 +36,7 @@ export class RowSearch {
   ) {
     const { n, table } = frame;
     this.canonicity = new Canonicity(frame);
-    this.track = new ComponentTrack(frame, components);
+    this.component = new ComponentTest(frame, components);
     this.left = table.halfLines.slice();
     this.open = table.degree.slice();
     this.after = new Int32Array((n + 1) * (n + 1));
@@ -180,7 +180,8 @@ export class RowSearch {
   /** Tests a complete row and prepares the next; a number > row to go on, else the row to go back to. */
   private finish(row: number): number {
     const { n, external } = this.frame;
-    if (!this.track.close(row, this.open)) return row;
+    if (!this.component.admits(row, this.open)) return row;
+    if (!this.canonicity.enter(row)) return this.canonicity.restsOn;
     if (row + 1 === n) return this.canonicity.isCanonical() ? n : this.canonicity.restsOn;
     this.split(row);
     if (row > external && row < n - 2 && !this.canonicity.mayBegin(row + 1)) return this.canonicity.restsOn;
