@@ -1,21 +1,10 @@
-import { factorial } from '../exact/combinatorics.ts';
 import { type ExactNumber, equalNumbers, fromInteger, multiplyNumbers, NUMBER_ONE } from '../exact/number.ts';
 import type { Check } from './check.ts';
 import { parametersText } from './kinds.ts';
-import type { CoefficientTerm, FieldFactor, Model, VertexKind } from './model.ts';
-import { coefficientText, termText } from './print.ts';
+import type { CoefficientTerm, Model, VertexKind } from './model.ts';
+import { coefficientText, exchanges, termText } from './print.ts';
 
 const MOST = 6;
-
-/** ∏ k!, k the number of equal fields: the ways to exchange the fields of a vertex. */
-export function exchanges(factors: readonly FieldFactor[]): bigint {
-  const counts = new Map<string, number>();
-  for (const { field, conjugate } of factors) {
-    const key = `${field}${conjugate ? '^*' : ''}`;
-    counts.set(key, (counts.get(key) ?? 0) + 1);
-  }
-  return [...counts.values()].reduce((product, n) => product * factorial(n), 1n);
-}
 
 const isOne = (number: ExactNumber): boolean =>
   equalNumbers(number, NUMBER_ONE) || equalNumbers(number, fromInteger(-1));

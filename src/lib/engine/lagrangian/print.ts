@@ -1,9 +1,10 @@
 import { factorial } from '../exact/combinatorics.ts';
-import { type ExactNumber, fromInteger, multiplyNumbers, rationalValue } from '../exact/number.ts';
+import { type ExactNumber, fromInteger, rationalValue } from '../exact/number.ts';
 import { latexNumber, typedNumber } from '../exact/numberText.ts';
 import { parametersLatex, parametersText } from './kinds.ts';
 import type { CoefficientTerm, FieldFactor, Model, Monomial, Term } from './model.ts';
 import { nameLatex } from './symbols.ts';
+import { termsOf } from './terms.ts';
 
 /** How a term is written: as text that is typed, or as LaTeX. Both parse back to the same term. */
 interface Style {
@@ -45,8 +46,21 @@ const LATEX: Style = {
   square: (field) => `(\\partial ${field})^{2}`,
   indices: INDICES,
   over: (above, below) => `\\frac{${above}}{${below}}`,
-  product: '\\,',
+  product: ' ',
 };
+
+function countsOf(factors: readonly FieldFactor[]): Map<string, number> {
+  const counts = new Map<string, number>();
+  for (const { field, conjugate } of factors) {
+    const key = conjugate ? `${field}^*` : field;
+    counts.set(key, (counts.get(key) ?? 0) + 1);
+  }
+  return counts;
+}
+
+/** ∏ k!, k the number of equal fields of a term: the ways to exchange them. */
+export const exchanges = (factors: readonly FieldFactor[]): bigint =>
+  [...countsOf(factors).values()].reduce((product, n) => product * factorial(n), 1n);
 
 const same = (a: FieldFactor, b: FieldFactor): boolean => a.field === b.field && a.conjugate === b.conjugate;
 
@@ -71,7 +85,8 @@ function fieldsOf({ factors, derivatives }: Term, style: Style): string {
   );
   if (derivatives.length === 1 && only![0] !== only![1]) {
     const [a, b] = [factors[only![0]]!, factors[only![1]]!];
-    if (same(a, b) && !a.conjugate) return [...plain, style.square(style.name(a))].join(style.product);
+    if (same(a, b)) return [...plain, style.square(style.name(a))].join(style.product);
+    if (style === TEXT) return [...plain, `(d ${style.name(a)})(d ${style.name(b)})`].join(style.product);
   }
   const operators: string[][] = factors.map(() => []);
   derivatives.forEach(([i, j], at) => {
@@ -87,10 +102,24 @@ function fieldsOf({ factors, derivatives }: Term, style: Style): string {
   return [...plain, ...derived].join(style.product);
 }
 
-/** n! of the one field that a term holds three times or more without derivatives: how the coefficient is written on paper. */
-function paperFactorial({ factors, derivatives }: Term): number | null {
-  if (derivatives.length > 0 || factors.length < 3) return null;
-  return factors.every((factor) => same(factor, factors[0]!)) ? factors.length : null;
+/** The factorials of the fields that stand three times or more in a term without derivatives, as on paper: "4!", "(3! 3!)". */
+function paperFactorials({ factors, derivatives }: Term, style: Style): string | null {
+  if (derivatives.length > 0) return null;
+  const counts = [...countsOf(factors).values()];
+  if (!counts.some((n) => n > 2)) return null;
+  const pieces = counts.filter((n) => n > 1).map((n) => `${n}!`);
+  return pieces.length === 1 || style === LATEX ? pieces.join(style.product) : `(${pieces.join(style.product)})`;
+}
+
+/** Numerator and denominator of a coefficient that is a rational times parameters; null where it is written as a number in front. */
+function fraction(term: Term, style: Style): { above: ExactNumber; below: string } | null {
+  const value = rationalValue(term.number);
+  if (!value || term.parameters.size === 0 || term.factors.length < 3) return null;
+  const factorials = paperFactorials(term, style);
+  const size = value.num < 0n ? -value.num : value.num;
+  if (factorials !== null && size === 1n && value.den === exchanges(term.factors))
+    return { above: fromInteger(value.num), below: factorials };
+  return value.den === 1n ? null : { above: fromInteger(value.num), below: `${value.den}` };
 }
 
 /** A number times parameters over what stands below the line. */
@@ -99,22 +128,14 @@ function coefficientOf(number: ExactNumber, parameters: Monomial, below: string 
   const minus = negative && terms === 1;
   const symbols = parameters.size === 0 ? '' : style.parameters(parameters);
   const bracketed = terms > 1 ? `(${negative ? '-' : ''}${text})` : text;
-  const above = symbols === '' ? bracketed : bracketed === '1' ? symbols : `${bracketed}${style.product}${symbols}`;
+  const above = symbols === '' ? bracketed : bracketed === '1' ? symbols : `${bracketed} ${symbols}`;
   return { minus, text: below === null ? above : style.over(above, below) };
 }
 
 function written(term: Term, style: Style): { minus: boolean; text: string } {
-  const n = paperFactorial(term);
+  const { above, below } = fraction(term, style) ?? { above: term.number, below: null };
+  const { minus, text } = coefficientOf(above, term.parameters, below, style);
   const fields = fieldsOf(term, style);
-  if (n !== null) {
-    const number = multiplyNumbers(term.number, fromInteger(factorial(n)));
-    const size = rationalValue(number)?.num;
-    if ((size === 1n || size === -1n) && term.parameters.size > 0 && rationalValue(number)!.den === 1n) {
-      const { minus, text } = coefficientOf(number, term.parameters, `${n}!`, style);
-      return { minus, text: `${text} ${fields}` };
-    }
-  }
-  const { minus, text } = coefficientOf(term.number, term.parameters, null, style);
   return { minus, text: text === '1' ? fields : `${text} ${fields}` };
 }
 
@@ -127,20 +148,14 @@ function sum(terms: readonly Term[], style: Style): string {
     .join(' ');
 }
 
-/** All terms of a model: quadratic parts of the fields, then the vertices. */
-const allTerms = ({ propagators, kinds }: Model): Term[] => [
-  ...propagators.flatMap(({ terms }) => terms),
-  ...kinds.flatMap(({ terms }) => terms),
-];
-
 /** One term as it is typed: "-lambda/4! phi^4". */
 export const termText = (term: Term): string => sum([term], TEXT);
 export const termLatex = (term: Term): string => sum([term], LATEX);
 
 /** The normal form as a text that parses to the same model. */
-export const modelText = (model: Model): string => sum(allTerms(model), TEXT);
+export const modelText = (model: Model): string => sum(termsOf(model), TEXT);
 /** The normal form in LaTeX that parses to the same model. */
-export const modelLatex = (model: Model): string => sum(allTerms(model), LATEX);
+export const modelLatex = (model: Model): string => sum(termsOf(model), LATEX);
 
 function coefficientSum(terms: readonly CoefficientTerm[], style: Style): string {
   if (terms.length === 0) return '0';
