@@ -76,6 +76,8 @@ export interface Estimate {
   bytes: number;
   allowed: boolean;
   reason: string | null;
+  /** Why the correlator vanishes at every order by a symmetry of the model, or null. */
+  vanishes: string | null;
   /** A stored expansion with the same content, if there is one the asker may see. */
   stored: string | null;
 }

@@ -2,6 +2,8 @@ import { LimitError } from '../errors.ts';
 import { add, format, type Rational, rational, ZERO } from '../exact/rational.ts';
 import { expandContent } from '../expansion/expand.ts';
 import type { Content, CountingRequest } from '../graph/theory.ts';
+import type { FieldFactor } from '../lagrangian/model.ts';
+import { forbiddenBySymmetry } from '../lagrangian/symmetries.ts';
 import { independentSums } from '../ledger/independent.ts';
 import type { Prepared } from './prepare.ts';
 
@@ -14,6 +16,8 @@ export interface EngineEstimate {
   readonly weight: string;
   readonly seconds: number;
   readonly bytes: number;
+  /** Why the correlator vanishes at every order (a symmetry of the model forbids it), or null. */
+  readonly vanishes: string | null;
 }
 
 /** Multiplications that the exact sum may take here: some tens of milliseconds. */
@@ -166,7 +170,12 @@ export function estimate(prepared: Prepared, budget: number): EngineEstimate {
     weight: sums && request.drop.length === 0 ? format(sums.weight) : '',
     seconds: (spent + rest.milliseconds + classes * HANDLING_MS) / 1000,
     bytes: classes * (BYTES_PER_CLASS + lines * BYTES_PER_LINE),
+    vanishes: classes === 0 ? forbiddenBySymmetry(prepared.model, operatorsOf(prepared)) : null,
   };
+}
+
+function operatorsOf({ names }: Prepared): FieldFactor[] {
+  return names.legs.map((leg) => ({ field: leg.replace('^*', ''), conjugate: leg.endsWith('^*') }));
 }
 
 function linesOf({ theory }: CountingRequest, content: Content): number {
