@@ -24,5 +24,5 @@ export function* enumerateContent(
   }
   const search = new RowSearch(frame, options.components, options.stop);
   const emitter = new Emitter(frame, theory, frame.used);
-  while (search.next()) yield emitter.diagram(search.canonicity.orbitSizes);
+  while (search.next()) yield emitter.diagram(search.canonicity.orbitSizes, search.changed);
 }

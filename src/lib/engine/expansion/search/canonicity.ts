@@ -19,8 +19,8 @@ const UNKNOWN = 3;
  * the places before, the same row as the matrix has at d. A larger row refutes canonicity, a smaller one ends the branch.
  * Runs are permuted as sets, so no order within a run is tried before a row tells its members apart.
  *
- * Renumberings are sorted by the first place d that they change and the node v put there. What is known of (d, v) is kept
- * while the rows it rests on stand, so a test looks only into what is still undecided.
+ * Renumberings are sorted by the first place d that they change and the node v put there. The pairs (d, v) that are not
+ * refuted are kept row by row, so a test looks only into what is still undecided.
  *
  * The group is counted along the chain of stabilisers of places 0, 1, 2, …, from its end: an orbit for each place, one
  * automorphism for each new member of an orbit, equivalent choices skipped.
@@ -37,11 +37,9 @@ export class Canonicity {
   private readonly values: Int32Array;
   private readonly image: Int32Array;
   private readonly orbits: Orbits;
-  /** verdict[d·n + v] when row v was finished; a later LESS holds while row closedBy still has version closedAt. */
-  private readonly verdict: Uint8Array;
-  private readonly closedBy: Int32Array;
-  private readonly closedAt: Int32Array;
-  private readonly version: Int32Array;
+  /** pairs[segment(r)…]: the undecided pairs d·n + v after row r; live[r]: their number. */
+  private readonly pairs: Int32Array;
+  private readonly live: Int32Array;
   private visits = 0;
 
   constructor(private readonly frame: Frame) {
@@ -50,72 +48,66 @@ export class Canonicity {
     this.values = new Int32Array(n);
     this.image = Int32Array.from({ length: n }, (_, v) => v);
     this.orbits = new Orbits(n);
-    this.verdict = new Uint8Array(n * n);
-    this.closedBy = new Int32Array(n * n);
-    this.closedAt = new Int32Array(n * n);
-    this.version = new Int32Array(n);
+    this.pairs = new Int32Array((n * n * (n + 1)) / 2);
+    this.live = new Int32Array(n);
     this.orbitSizes = new Int32Array(n);
   }
 
   /** Takes note of the finished row r; false when it is larger than an earlier one in whose place it could stand. */
   enter(r: number): boolean {
     const { n, external, runEnd } = this.frame;
-    for (let row = r; row < n; row++) this.version[row]!++;
+    const { pairs, live } = this;
+    const segment = this.segment(r);
+    const before = r > 0 ? this.segment(r - 1) : 0;
+    let count = r > 0 ? live[r - 1]! : 0;
+    for (let i = 0; i < count; i++) pairs[segment + i] = pairs[before + i]!;
     for (let d = external; d < r; d++) {
-      const at = d * n + r;
       if (runEnd[d * n + d]! <= r) continue;
-      this.placeIdentity(d);
-      const verdict = this.compare(d, r);
+      const verdict = this.compareRows(d, r);
       if (verdict === GREATER) {
         this.restsOn = r;
         return false;
       }
-      this.verdict[at] = verdict;
-      this.closedAt[at] = 0;
+      if (verdict === EQUAL) pairs[segment + count++] = d * n + r;
     }
+    live[r] = count;
     return true;
   }
 
-  /** Whether rows 0…rows−1 may begin a canonical matrix; may say yes too often, never no. */
-  mayBegin(rows: number): boolean {
-    const { n, external, runEnd } = this.frame;
+  /** Whether rows 0…r may begin a canonical matrix; may say yes too often, never no. */
+  mayBegin(r: number): boolean {
+    const { n } = this.frame;
+    const { pairs } = this;
+    const segment = this.segment(r);
+    const count = this.live[r]!;
+    let kept = 0;
     this.visits = 0;
-    for (let d = external; d < rows; d++) {
-      const end = Math.min(runEnd[d * n + d]!, rows);
-      for (let v = d + 1; v < end; v++) {
-        if (this.isLess(d, v)) continue;
-        const verdict = this.explore(d, v, rows);
-        if (verdict === GREATER) return false;
-        if (verdict === LESS) this.remember(d, v, rows - 1);
-      }
+    for (let i = 0; i < count; i++) {
+      const pair = pairs[segment + i]!;
+      const v = pair % n;
+      const verdict = this.explore((pair - v) / n, v, r + 1);
+      if (verdict === GREATER) return false;
+      if (verdict === UNKNOWN) pairs[segment + kept++] = pair;
     }
+    this.live[r] = kept;
     return true;
   }
 
   /** Whether the finished matrix is canonical; fills orbitSizes. */
   isCanonical(): boolean {
-    const { n, external, runEnd } = this.frame;
+    const { n, external } = this.frame;
+    const { orbitSizes } = this;
+    for (let d = 0; d < n; d++) orbitSizes[d] = 1;
+    if (n === 0 || this.live[n - 1] === 0) return true;
     this.visits = 0;
     this.orbits.clear();
-    this.orbitSizes.fill(1);
-    for (let d = n - 2; d >= external; d--) {
-      const end = runEnd[d * n + d]!;
-      if (end > d + 1 && !this.countOrbit(d, end)) return false;
-    }
+    for (let d = n - 2; d >= external; d--) if (!this.countOrbit(d)) return false;
     return true;
   }
 
-  private isLess(d: number, v: number): boolean {
-    const at = d * this.frame.n + v;
-    if (this.verdict[at] === LESS) return true;
-    const closed = this.closedAt[at]!;
-    return closed > 0 && this.version[this.closedBy[at]!] === closed;
-  }
-
-  private remember(d: number, v: number, row: number): void {
-    const at = d * this.frame.n + v;
-    this.closedBy[at] = row;
-    this.closedAt[at] = this.version[row]!;
+  /** Pairs of rows 0…r−1 come first: row r has at most (r + 1)·n of them. */
+  private segment(r: number): number {
+    return (this.frame.n * r * (r + 1)) / 2;
   }
 
   /** Verdict on all renumberings that change no place before d and put node v, whose row is equal, at d. */
@@ -130,20 +122,19 @@ export class Canonicity {
   }
 
   /** Orbit of place d under the renumberings that fix the places before it; false when a larger matrix turns up. */
-  private countOrbit(d: number, end: number): boolean {
-    const { orbits } = this;
+  private countOrbit(d: number): boolean {
+    const { orbits, pairs } = this;
     const { n } = this.frame;
+    const segment = this.segment(n - 1);
+    const end = segment + this.live[n - 1]!;
+    const low = d * n;
     let size = 1;
-    for (let v = d + 1; v < end; v++) {
-      if (this.isLess(d, v)) continue;
-      if (orbits.joined(d, v)) {
-        size++;
-        continue;
-      }
-      const verdict = this.explore(d, v, n);
+    for (let i = segment; i < end; i++) {
+      const v = pairs[i]! - low;
+      if (v < 0 || v >= n) continue;
+      const verdict = orbits.joined(d, v) ? EQUAL : this.explore(d, v, n);
       if (verdict === GREATER) return false;
       if (verdict === EQUAL) size++;
-      else this.remember(d, v, n - 1);
     }
     this.orbitSizes[d] = size;
     return true;
@@ -184,6 +175,30 @@ export class Canonicity {
       if (verdict === UNKNOWN) result = UNKNOWN;
     }
     return result;
+  }
+
+  /** Row of node v if it alone is moved to place d, against row d. */
+  private compareRows(d: number, v: number): number {
+    const { n, matrix, runEnd } = this.frame;
+    const { values } = this;
+    const base = d * n;
+    const row = v * n;
+    const own = matrix[row + v]! - matrix[base + d]!;
+    if (own !== 0) return own > 0 ? GREATER : LESS;
+    for (let p = d + 1; p < n; ) {
+      const end = runEnd[base + p]!;
+      for (let q = p; q < end; q++) {
+        const value = matrix[row + (q === v ? d : q)]!;
+        let s = q;
+        for (; s > p && values[s - 1]! < value; s--) values[s] = values[s - 1]!;
+        values[s] = value;
+      }
+      for (; p < end; p++) {
+        const difference = values[p]! - matrix[base + p]!;
+        if (difference !== 0) return difference > 0 ? GREATER : LESS;
+      }
+    }
+    return EQUAL;
   }
 
   /** Row of the node at place `at` if it is moved to place d, against row d of the matrix; fills the order for place d + 1. */

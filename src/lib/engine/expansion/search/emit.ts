@@ -19,8 +19,12 @@ export class Emitter {
   private readonly own: readonly Bundle[];
   /** Lines are values: one object for each (from, to, type) that occurs. */
   private readonly lineOf: Line[] = [];
-  private readonly scratch: Line[] = [];
   private readonly types: number;
+  /** Lines of the rows before row r are lines[0…lineCount[r]−1]; their factors are small[r] · large[r]. */
+  private readonly lines: Line[] = [];
+  private readonly lineCount: Int32Array;
+  private readonly small: Float64Array;
+  private readonly large: bigint[];
 
   /** used: the type of the theory behind each type of the frame's table. */
   constructor(
@@ -32,32 +36,49 @@ export class Emitter {
     this.between = frame.table.counts.map((counts) => bundle(counts, false));
     this.own = frame.table.selfCounts.map((counts) => bundle(counts, true));
     this.types = theory.partner.length;
+    this.lineCount = new Int32Array(frame.n + 1);
+    this.small = new Float64Array(frame.n + 1).fill(1);
+    this.large = new Array<bigint>(frame.n + 1).fill(1n);
   }
 
-  /** The diagram of the matrix as it stands; its arrays are its own. O(n²). */
-  diagram(orbitSizes: Int32Array): CountedDiagram {
-    const { n, external, matrix, kinds } = this.frame;
-    let small = 1;
-    let large = 1n;
-    const times = (factor: number): void => {
-      if (small * factor >= SAFE) {
+  /** The diagram of the matrix as it stands; its arrays are its own. Rows before `changed` are as they were at the last call. */
+  diagram(orbitSizes: Int32Array, changed: number): CountedDiagram {
+    const { n, external, kinds } = this.frame;
+    for (let row = Math.max(changed, external); row < n; row++) this.readRow(row);
+    let small = this.small[n]!;
+    let large = this.large[n]!;
+    for (let v = external; v < n; v++) {
+      const size = orbitSizes[v]!;
+      if (size === 1) continue;
+      if (small * size >= SAFE) {
         large *= BigInt(small);
         small = 1;
       }
-      small *= factor;
-    };
-    for (let v = external; v < n; v++) if (orbitSizes[v]! > 1) times(orbitSizes[v]!);
-    let count = 0;
-    for (let i = external; i < n; i++)
-      for (let j = i; j < n; j++) {
-        const code = matrix[i * n + j]!;
-        if (code === 0) continue;
-        const bundle = (i === j ? this.own : this.between)[code]!;
-        if (bundle.factor > 1) times(bundle.factor);
-        count = this.addLines(bundle, i - external, j - external, count);
-      }
+      small *= size;
+    }
     const symmetryFactor = large === 1n ? BigInt(small) : large * BigInt(small);
-    return { kinds, legs: this.legs(), lines: this.scratch.slice(0, count), symmetryFactor };
+    return { kinds, legs: this.legs(), lines: this.lines.slice(0, this.lineCount[n]), symmetryFactor };
+  }
+
+  private readRow(row: number): void {
+    const { n, external, matrix } = this.frame;
+    let count = this.lineCount[row]!;
+    let small = this.small[row]!;
+    let large = this.large[row]!;
+    for (let j = row; j < n; j++) {
+      const code = matrix[row * n + j]!;
+      if (code === 0) continue;
+      const bundle = (row === j ? this.own : this.between)[code]!;
+      count = this.addLines(bundle, row - external, j - external, count);
+      if (small * bundle.factor >= SAFE) {
+        large *= BigInt(small);
+        small = 1;
+      }
+      small *= bundle.factor;
+    }
+    this.lineCount[row + 1] = count;
+    this.small[row + 1] = small;
+    this.large[row + 1] = large;
   }
 
   private legs(): number[] {
@@ -75,7 +96,7 @@ export class Emitter {
     let at = count;
     for (const { type, count: lines, reversed } of bundle.lines) {
       const line = reversed ? this.line(j, i, type) : this.line(i, j, type);
-      for (let k = 0; k < lines; k++) this.scratch[at++] = line;
+      for (let k = 0; k < lines; k++) this.lines[at++] = line;
     }
     return at;
   }

@@ -26,6 +26,8 @@ export class RowSearch {
   /** selfCap[r·n + j]: the largest self-join that node j may have when row r begins. */
   private readonly selfCap: Int32Array;
   private readonly guard: number;
+  /** The first row that differs from the matrix before. */
+  changed = 0;
   private started = false;
   private steps = 0;
 
@@ -50,6 +52,7 @@ export class RowSearch {
     const { n } = this.frame;
     let row = this.started ? n - 1 : 0;
     let column = this.started ? this.retreat(row, n - 1) : 0;
+    this.changed = row;
     this.started = true;
     for (;;) {
       if (column >= 0) column = this.fill(row, column);
@@ -66,6 +69,7 @@ export class RowSearch {
         if (--row < 0) return false;
         column = this.retreat(row, n - 1);
       }
+      if (row < this.changed) this.changed = row;
       if (++this.steps % STEPS_BETWEEN === 0 && this.stop?.()) return false;
     }
   }
@@ -184,7 +188,7 @@ export class RowSearch {
     if (!this.canonicity.enter(row)) return this.canonicity.restsOn;
     if (row + 1 === n) return this.canonicity.isCanonical() ? n : this.canonicity.restsOn;
     this.split(row);
-    if (row > external && row < n - 2 && !this.canonicity.mayBegin(row + 1)) return this.canonicity.restsOn;
+    if (row > external && row < n - 2 && !this.canonicity.mayBegin(row)) return this.canonicity.restsOn;
     this.openRow(row + 1);
     return row + 1;
   }
