@@ -97,6 +97,24 @@ function divisionNotes(source: Source, node: Node, fields: ReadonlySet<string>):
   return notes;
 }
 
+/** "phi* phi": a star between two equal fields, where a reader may have meant the conjugate. */
+function starNotes(source: Source, node: Node, fields: ReadonlySet<string>): Note[] {
+  const notes: Note[] = [];
+  walk(node, (inner) => {
+    if (inner.is !== 'product') return;
+    inner.factors.forEach((factor, k) => {
+      const before = inner.factors[k - 1]?.node;
+      if (!before || factor.juxtaposed || factor.by === '/' || before.is !== 'name' || !fields.has(before.name)) return;
+      const lopsided = source.text.slice(before.end, factor.node.start).startsWith('* ');
+      if (!lopsided && (factor.node.is !== 'name' || factor.node.name !== before.name)) return;
+      const span: Span = { start: before.start, end: factor.node.end };
+      const message = `"${source.quote(span)}" was read as a product; the conjugate is written ${before.name}^*.`;
+      notes.push({ code: 'star', message, span });
+    });
+  });
+  return notes;
+}
+
 /** A name that is made of other names of the text: "lambdaphi". */
 function gluedNotes(usage: Usage, fields: ReadonlySet<string>): Note[] {
   const known = [...new Set([...GREEK, ...usage.first.keys()])];
@@ -138,6 +156,7 @@ export function readingNotes(
   const complexParameters = [...complex].filter((name) => !fields.has(name) && usage.first.has(name));
   return [
     ...nodes.flatMap((node) => divisionNotes(source, node, fields)),
+    ...nodes.flatMap((node) => starNotes(source, node, fields)),
     ...gluedNotes(usage, fields),
     ...similarNotes(usage),
     ...indexNotes(usage, fields),
