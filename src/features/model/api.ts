@@ -14,7 +14,7 @@ export class ApiError extends Error {
   }
 }
 
-async function call<T>(path: string, method: 'POST' | 'PUT', body: unknown, signal?: AbortSignal): Promise<T> {
+export async function call<T>(path: string, method: 'POST' | 'PUT', body: unknown, signal?: AbortSignal): Promise<T> {
   let response: Response;
   try {
     response = await fetch(`/api/v1${path}`, {
