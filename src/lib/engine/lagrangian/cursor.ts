@@ -36,9 +36,9 @@ export class Cursor {
   }
 
   digits(): string {
-    const start = this.at;
-    while (isDigit(this.text[this.at] ?? '')) this.at++;
-    return this.text.slice(start, this.at);
+    let digits = '';
+    for (; isDigit(this.peek()); this.advance()) digits += this.peek();
+    return digits;
   }
 
   /** The name of the LaTeX command at the cursor, without its backslash. */

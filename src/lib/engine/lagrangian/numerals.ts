@@ -24,7 +24,7 @@ export function readNumeral(cursor: Cursor): { value: Rational; digits: string }
   const start = cursor.at;
   const whole = cursor.digits();
   let fraction = '';
-  if (cursor.text[cursor.at] === '.' && isDigit(cursor.text[cursor.at + 1] ?? '')) {
+  if (cursor.text[cursor.at] === '.' && isDigit(cursor.peek(cursor.at + 1))) {
     cursor.at++;
     fraction = cursor.digits();
   }

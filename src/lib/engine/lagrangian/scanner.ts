@@ -2,9 +2,10 @@ import { rational } from '../exact/rational.ts';
 import { BOUNDS } from './bounds.ts';
 import { ENVIRONMENTS, type Meaning, meaningOf } from './commands.ts';
 import { Cursor, isDigit, isLetter } from './cursor.ts';
+import { FractionArguments } from './fractionArguments.ts';
 import { readNumeral, readRaised } from './numerals.ts';
 import type { Source } from './source.ts';
-import { FRACTIONS, greekName, LORENTZ, superscriptDigit } from './symbols.ts';
+import { FRACTIONS, GREEK, greekName, LORENTZ, superscriptDigit } from './symbols.ts';
 import { FUNCTIONS, isSkipped, MARKS, type Token } from './tokens.ts';
 
 type WithoutPlace<T> = T extends Token ? Omit<T, 'start' | 'end' | 'gap'> : never;
@@ -29,11 +30,12 @@ export function scan(source: Source): Token[] {
     );
   const cursor = new Cursor(source);
   const tokens: Token[] = [];
+  const fractions = new FractionArguments();
   let gap = false;
   while (cursor.at < length) {
     const start = cursor.at;
     const last = tokens.at(-1);
-    const word = readWord(cursor, last?.kind === 'mark' && last.mark === '^');
+    const word = readWord(cursor, last?.kind === 'mark' && last.mark === '^', fractions.takesOneLetter);
     if (word === null) {
       gap = true;
       continue;
@@ -45,18 +47,20 @@ export function scan(source: Source): Token[] {
         null,
         { start, end: cursor.at },
       );
-    tokens.push({ ...word, start, end: cursor.at, gap });
+    const token: Token = { ...word, start, end: cursor.at, gap };
+    tokens.push(token);
+    fractions.note(token);
     gap = false;
   }
   return [...tokens, { kind: 'end', start: length, end: length, gap }];
 }
 
-function readWord(cursor: Cursor, afterCaret: boolean): Word {
+function readWord(cursor: Cursor, afterCaret: boolean, oneLetter: boolean): Word {
   const start = cursor.at;
   const c = cursor.peek();
   if (c === '%') return skipComment(cursor);
   if (isDigit(c) || (c === '.' && isDigit(cursor.peek(start + 1)))) return { kind: 'number', ...readNumeral(cursor) };
-  if (isLetter(c)) return hermitianConjugate(cursor) ? { kind: 'hc' } : identifier(cursor);
+  if (isLetter(c)) return hermitianConjugate(cursor) ? { kind: 'hc' } : identifier(cursor, oneLetter);
   if (c === '\\') return command(cursor);
   cursor.advance();
   if (isSkipped(c)) return null;
@@ -105,12 +109,18 @@ function hermitianConjugate(cursor: Cursor): boolean {
   return match !== null;
 }
 
-function identifier(cursor: Cursor): Word {
+/** A whole identifier; where LaTeX takes one letter, one letter or a Greek name. */
+function identifier(cursor: Cursor, oneLetter: boolean): Word {
   const start = cursor.at;
   let name = '';
   while (isLetter(cursor.peek()) || (name !== '' && isDigit(cursor.peek()))) {
     name += cursor.peek();
     cursor.advance();
+  }
+  if (oneLetter && !GREEK.has(name)) {
+    cursor.at = start;
+    cursor.advance();
+    name = name[0]!;
   }
   return named(cursor, name, start);
 }
