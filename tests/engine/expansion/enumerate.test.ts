@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { enumerateContent } from '#engine/expansion/enumerate.ts';
 import { automorphisms } from '#engine/graph/automorphisms.ts';
-import { canonicalLabel } from '#engine/graph/canonical.ts';
 import { classesByBruteForce, classesOfList } from '../../support/bruteForce.ts';
 import { smallCases } from '../ledger/smallCases.ts';
 
