@@ -2,6 +2,7 @@ import { type ErrorObject, errorObject } from '#contract/errors.ts';
 import type { JobAcknowledgement, JobEnd, JobMessage, JobTask, StoredDiagram } from '#contract/job.ts';
 import { prepare, runExpansion } from '#engine/index.ts';
 import { misbehave } from './misbehave.ts';
+import { assertRules } from './symbolic.ts';
 
 /** Few enough that the server stores them in a few milliseconds, between requests. */
 const CHUNK_ROWS = 100;
@@ -66,6 +67,8 @@ async function expand(task: JobTask): Promise<JobEnd> {
     const step = run.next();
     if (step.done) {
       await outlet.flush(1);
+      post({ kind: 'progress', classes, phase: 'checking the rules' });
+      assertRules(prepared.model);
       post({ kind: 'progress', classes, phase: 'storing' });
       const { summary, ledger } = step.value;
       return {

@@ -5,6 +5,7 @@
  * The walk: `prepare` reads a request → `estimate` tells what it will cost → `runExpansion` streams compact diagrams and ends
  * with summary and ledger → `render…`, `drawingOf`, `workingOf` put a model's names back when something is shown.
  */
+export { plainVertexNumber } from './answer/coefficient.ts';
 export type { CompactDiagram } from './answer/compact.ts';
 export { FLAGS } from './answer/compact.ts';
 export { answerDiagram } from './answer/diagram.ts';
@@ -25,3 +26,4 @@ export {
 export { type RunEnd, runExpansion, type SummaryBody } from './answer/run.ts';
 export { ENGINE, ENGINE_VERSION } from './answer/version.ts';
 export { working, workingOf } from './answer/working.ts';
+export type { Model, VertexKind } from './lagrangian/model.ts';

@@ -1,8 +1,5 @@
-import { factorial } from '../exact/combinatorics.ts';
 import {
-  addNumbers,
   type ExactNumber,
-  fromInteger,
   fromRational,
   IMAGINARY,
   multiplyNumbers,
@@ -11,12 +8,14 @@ import {
   negateNumber,
   numberSign,
   powerOfNumber,
+  rationalValue,
 } from '../exact/number.ts';
 import { numberLatex, numberText, productLatex, productText } from '../exact/numberText.ts';
 import { add, format, multiply, type Rational, rational, ZERO } from '../exact/rational.ts';
 import type { Diagram } from '../graph/diagram.ts';
 import { parametersLatex, parametersText } from '../lagrangian/kinds.ts';
 import type { Model, Signature, VertexKind } from '../lagrangian/model.ts';
+import { vertexFactor } from '../rules/factor.ts';
 import type { NamedTheory } from './theory.ts';
 import type { WorkingDTO } from './types.ts';
 
@@ -26,15 +25,13 @@ type Coefficient = WorkingDTO['coefficient'];
 const phase = (n: number): ExactNumber =>
   [NUMBER_ONE, IMAGINARY, negateNumber(NUMBER_ONE), negateNumber(IMAGINARY)][((n % 4) + 4) % 4]!;
 
-/** Number of a kind without derivatives: the sum of its terms times ∏ k_field!, what the functional derivative leaves. */
-function kindNumber(kind: VertexKind): ExactNumber {
-  const counts = new Map<string, number>();
-  for (const { field, conjugate } of kind.fields)
-    counts.set(`${field} ${conjugate}`, (counts.get(`${field} ${conjugate}`) ?? 0) + 1);
-  const ways = [...counts.values()].reduce((product, n) => product * factorial(n), 1n);
-  const total = kind.terms.reduce((sum, { number }) => addNumbers(sum, number), NUMBER_ZERO);
-  return multiplyNumbers(total, fromInteger(ways));
-}
+/** What the functional derivative of a kind without derivative couplings leaves: its rule without i and couplings. */
+const kindNumber = (kind: VertexKind): ExactNumber =>
+  negateNumber(vertexFactor(kind, 'euclidean').terms[0]?.number ?? NUMBER_ZERO);
+
+/** The number of a kind's rule without i and couplings; null with derivative couplings or where it is not rational. */
+export const plainVertexNumber = (kind: VertexKind): Rational | null =>
+  hasDerivatives(kind) ? null : rationalValue(kindNumber(kind));
 
 const hasDerivatives = (kind: VertexKind): boolean => kind.terms.some(({ derivatives }) => derivatives.length > 0);
 

@@ -1,0 +1,23 @@
+import { describe, expect, it } from 'vitest';
+import { readModel } from '#engine/lagrangian/read.ts';
+import { assertRules, checkRules } from '#jobs/symbolic.ts';
+
+const texts = [
+  '1/2 (d phi)^2 - g/3! phi^3 - lambda/4! phi^4 - y/5! phi^5 - z/6! phi^6',
+  '1/2 (d phi)^2 - 7/5 g phi^3 - 24 lambda phi^4 - a/12! phi^12',
+  '1/2 (d h)^2 + 1/2 (d s)^2 - lh/4! h^4 - ls/4! s^4 - lhs/4 h^2 s^2 - kappa/2 h s^2 - k3/3! h^3 - t h',
+  '(d phi^*)(d phi) - m^2 phi^* phi + 1/2 (d chi)^2 - g chi phi^* phi - lambda/4 (phi^* phi)^2 - mu (phi^3 + phi^*^3)',
+];
+
+describe('vertex rules against derivatives by a computer algebra system', () => {
+  it.each(texts)('%s', (lagrangian) => {
+    const checks = checkRules(readModel({ lagrangian }));
+    expect(checks.length).toBeGreaterThan(1);
+    expect(checks.every(({ agrees }) => agrees === true)).toBe(true);
+  });
+  it('leaves derivative couplings and irrational numbers to other checks', () => {
+    const model = readModel({ lagrangian: '1/2 (d phi)^2 + b phi (d phi)^2 - sqrt(2) g phi^4 - pi g phi^6' });
+    expect(checkRules(model).map(({ agrees }) => agrees)).toEqual([null, null, null]);
+    expect(() => assertRules(model)).not.toThrow();
+  });
+});
