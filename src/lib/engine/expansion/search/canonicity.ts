@@ -187,6 +187,12 @@ export class Canonicity {
     if (own !== 0) return own > 0 ? GREATER : LESS;
     for (let p = d + 1; p < n; ) {
       const end = runEnd[base + p]!;
+      if (end === p + 1) {
+        const difference = matrix[row + (p === v ? d : p)]! - matrix[base + p]!;
+        if (difference !== 0) return difference > 0 ? GREATER : LESS;
+        p = end;
+        continue;
+      }
       for (let q = p; q < end; q++) {
         const value = matrix[row + (q === v ? d : q)]!;
         let s = q;
@@ -214,6 +220,14 @@ export class Canonicity {
     const first = order[base + d]!;
     for (let p = d + 1; p < n; ) {
       const end = runEnd[base + p]!;
+      if (end === p + 1) {
+        const u = p === at ? first : order[base + p]!;
+        const difference = matrix[row + u]! - matrix[base + p]!;
+        if (difference !== 0) return difference > 0 ? GREATER : LESS;
+        order[next + p] = u;
+        p = end;
+        continue;
+      }
       for (let q = p; q < end; q++) {
         const u = q === at ? first : order[base + q]!;
         const value = matrix[row + u]!;

@@ -188,7 +188,7 @@ export class RowSearch {
     if (!this.canonicity.enter(row)) return this.canonicity.restsOn;
     if (row + 1 === n) return this.canonicity.isCanonical() ? n : this.canonicity.restsOn;
     this.split(row);
-    if (row > external && row < n - 2 && !this.canonicity.mayBegin(row)) return this.canonicity.restsOn;
+    if (row > external && row < n - 3 && !this.canonicity.mayBegin(row)) return this.canonicity.restsOn;
     this.openRow(row + 1);
     return row + 1;
   }
