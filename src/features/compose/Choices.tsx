@@ -18,7 +18,7 @@ export function Choices({ ask, edit }: Props) {
           <label key={keep} className="check">
             <input type="radio" name="keep" value={keep} checked={ask.keep === keep} onChange={() => edit({ keep })} />
             <span>
-              {KEEP_WORDS[keep].label} <span className="quiet">{KEEP_WORDS[keep].text}</span>
+              <b>{KEEP_WORDS[keep].label}</b> <span className="quiet">{KEEP_WORDS[keep].text}</span>
             </span>
           </label>
         ))}
@@ -41,7 +41,7 @@ export function Choices({ ask, edit }: Props) {
               }
             />
             <span>
-              {DROP_WORDS[drop].label} <span className="quiet">{DROP_WORDS[drop].text}</span>
+              <b>{DROP_WORDS[drop].label}</b> <span className="quiet">{DROP_WORDS[drop].text}</span>
             </span>
           </label>
         ))}

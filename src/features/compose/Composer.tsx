@@ -5,17 +5,18 @@ import type { ErrorObject } from '#contract/errors.ts';
 import type { ModelInput } from '#contract/request.ts';
 import { draftOf, inputOf } from '#features/model/draft.ts';
 import { useAlive, usePreview, useRested } from '#features/model/hooks.ts';
-import { Formula } from '#features/model/parts.tsx';
-import { type Ask, legsOf, requestOf } from './ask.ts';
+import { Asked } from './Asked.tsx';
+import { type Ask, requestOf } from './ask.ts';
 import { Choices } from './Choices.tsx';
 import { Expected } from './Expected.tsx';
+import { Facts } from './Facts.tsx';
 import { type Known, useAddress, useEstimate } from './hooks.ts';
 import { Legs } from './Legs.tsx';
 import { Stored, type StoredModel, Typed } from './ModelPart.tsx';
 import { Order } from './Order.tsx';
-import { type Operator, operatorFor, operatorsOf, spokenCorrelator } from './operators.ts';
+import { operatorsOf } from './operators.ts';
 import { placeOf, sentenceOf } from './refusals.ts';
-import { countWords, keepWords, orderWords } from './words.ts';
+import { countWords } from './words.ts';
 
 export interface ComposerProps {
   /** The stored model, or null when the Lagrangian is typed here. */
@@ -27,6 +28,7 @@ export interface ComposerProps {
   readonly known: Known;
   /** Why the form that was sent was refused. */
   readonly refused: ErrorObject | null;
+  readonly signedIn: boolean;
 }
 
 export default function Composer(props: ComposerProps) {
@@ -45,6 +47,7 @@ function Form({
   ask: firstAsk,
   known: firstKnown,
   refused,
+  signedIn,
 }: ComposerProps) {
   const alive = useAlive();
   const [ask, setAsk] = useState(firstAsk);
@@ -102,66 +105,35 @@ function Form({
         <Choices ask={ask} edit={edit} />
         <TitleField ask={ask} edit={edit} />
       </div>
-      <div className="savebar composer-bar">
-        <Asked ask={ask} operators={operators} order={requestOf(input, ask).order} />
-        <Expected {...{ known, current, failed, ask, readable }} rules={preview.rules} />
-        <span role="status" className="sr-only">
-          {alive ? spoken : ''}
-        </span>
-        <div className="row">
-          {!alive && (
-            <button type="submit" name="intent" value="estimate" className="btn">
-              Count first
-            </button>
-          )}
-          <button
-            type="submit"
-            name="intent"
-            value="expand"
-            className="btn btn-primary"
-            aria-disabled={blocked || (alive && !readable) || undefined}
-          >
-            {sending ? 'Expanding …' : 'Expand'}
-          </button>
+      <div className="composer-aside">
+        <div className="composer-stick">
+          <div className="savebar composer-bar">
+            <Asked ask={ask} operators={operators} order={requestOf(input, ask).order} />
+            <Expected {...{ known, current, failed, ask, readable }} rules={preview.rules} />
+            <span role="status" className="sr-only">
+              {alive ? spoken : ''}
+            </span>
+            <div className="row">
+              {!alive && (
+                <button type="submit" name="intent" value="estimate" className="btn">
+                  Count first
+                </button>
+              )}
+              <button
+                type="submit"
+                name="intent"
+                value="expand"
+                className="btn btn-primary"
+                aria-disabled={blocked || (alive && !readable) || undefined}
+              >
+                {sending ? 'Expanding …' : 'Expand'}
+              </button>
+            </div>
+          </div>
+          <Facts input={input} preview={preview} signedIn={signedIn} />
         </div>
       </div>
     </form>
-  );
-}
-
-interface AskedProps {
-  readonly ask: Ask;
-  readonly operators: readonly Operator[];
-  readonly order: Parameters<typeof orderWords>[0];
-}
-
-/** The question in words of the trade: "⟨h h s s⟩ 1PI, one loop". */
-function Asked({ ask, operators, order }: AskedProps) {
-  const legs = legsOf(ask.legs);
-  return (
-    <div className="asked">
-      <p className="asked-legs">
-        <span className="sr-only">{spokenCorrelator(operators, legs)}</span>
-        <span aria-hidden="true" className="m correlator">
-          {legs.length === 0 ? (
-            'Z'
-          ) : (
-            <>
-              ⟨
-              {legs.map((leg, index) => {
-                const known = operatorFor(operators, leg);
-                // biome-ignore lint/suspicious/noArrayIndexKey: a leg is its place
-                return known ? <Formula key={index} html={known.mathml} /> : <span key={index}>{leg}</span>;
-              })}
-              ⟩
-            </>
-          )}
-        </span>
-      </p>
-      <p className="asked-words">
-        {keepWords(ask.keep, ask.drop)}, {orderWords(order, ask.through)}
-      </p>
-    </div>
   );
 }
 

@@ -45,7 +45,7 @@ export function Legs({ operators, value, onChange, error, alive }: Props) {
         </>
       )}
       <div className="field">
-        <label htmlFor="legs">{alive ? 'Or type them' : 'Field operators, in order'}</label>
+        <label htmlFor="legs">{alive && operators.length > 0 ? 'Or type them' : 'Field operators, in order'}</label>
         <input
           id="legs"
           name="legs"

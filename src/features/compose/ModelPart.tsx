@@ -7,6 +7,7 @@ import { LagrangianInput } from '#features/model/LagrangianInput.tsx';
 import { Mistake } from '#features/model/Mistake.tsx';
 import { offsetsOf, replaceStretch } from '#features/model/marks.ts';
 import { Formula } from '#features/model/parts.tsx';
+import { Scroll } from './Scroll.tsx';
 
 export interface StoredModel {
   readonly id: string;
@@ -33,9 +34,9 @@ export function Stored({ model, preview }: { readonly model: StoredModel; readon
           )}
         </span>
       </div>
-      <div className="scroll-x">
+      <Scroll label="Lagrangian, typeset">
         {preview.mathml === '' ? <code>{preview.normalText}</code> : <Formula html={preview.mathml} />}
-      </div>
+      </Scroll>
       {preview.error && <p className="error">{preview.error.message} Mend it in the model first.</p>}
     </section>
   );
@@ -90,9 +91,9 @@ export function Typed({ draft, edit, preview, alive }: TypedProps) {
         />
       )}
       {preview.mathml !== '' && (
-        <div className="scroll-x">
+        <Scroll label="Lagrangian, typeset">
           <Formula html={preview.mathml} />
-        </div>
+        </Scroll>
       )}
       {alive && <Examples onChoose={({ input: chosen }) => edit(draftOf(chosen))} />}
       <Overrides draft={draft} />

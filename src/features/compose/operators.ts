@@ -1,4 +1,5 @@
 import type { ModelPreview } from '#contract/api.ts';
+import { GREEK } from './words.ts';
 
 /** A field operator that may stand in a correlator. */
 export interface Operator {
@@ -29,27 +30,17 @@ export function operatorFor(operators: readonly Operator[], leg: string): Operat
   return known ?? operators.find((operator) => name === `${operator.name}^*`);
 }
 
-const GREEK: Readonly<Record<string, string>> = {
-  φ: 'phi',
-  ϕ: 'phi',
-  χ: 'chi',
-  ψ: 'psi',
-  σ: 'sigma',
-  π: 'pi',
-  η: 'eta',
-  ρ: 'rho',
-  ξ: 'xi',
-  ζ: 'zeta',
-  θ: 'theta',
-  ω: 'omega',
-};
+const SPELLED: ReadonlyMap<string, string> = new Map([
+  ...Object.entries(GREEK).map(([name, letter]) => [letter, name] as const),
+  ['ϕ', 'phi'] as const,
+]);
 
 function plain(leg: string): string {
   const bare = leg
     .replace(/^conj\((.*)\)$/, '$1^*')
     .replace(/\\/g, '')
     .replace(/\^?(†|\{?dagger\}?)$|\^\{\*\}$|(?<!\^)\*$/, '^*');
-  return bare.replace(/\p{L}/gu, (letter) => GREEK[letter] ?? letter);
+  return bare.replace(/\p{L}/gu, (letter) => SPELLED.get(letter) ?? letter);
 }
 
 /** The legs with one moved by a place, or as they are at an end. */

@@ -28,6 +28,19 @@ export const ORDER_WORDS: Readonly<Record<OrderBy, Choice>> = {
   total: { label: 'Total power', text: 'the sum of all powers, weighted' },
 };
 
+/** Greek letters by their names. */
+export const GREEK: Readonly<Record<string, string>> = Object.fromEntries(
+  (
+    'alpha α beta β gamma γ delta δ epsilon ε zeta ζ eta η theta θ iota ι kappa κ lambda λ mu μ nu ν xi ξ pi π rho ρ ' +
+    'sigma σ tau τ upsilon υ phi φ chi χ psi ψ omega ω Gamma Γ Delta Δ Theta Θ Lambda Λ Xi Ξ Pi Π Sigma Σ Phi Φ Psi Ψ Omega Ω'
+  )
+    .match(/\S+ \S+/gu)!
+    .map((pair) => pair.split(' ') as [string, string]),
+);
+
+/** "lambda" → "λ", "lambda_3" → "λ_3": a name as one reads it. */
+export const nameWords = (name: string): string => name.replace(/^[A-Za-z]+/, (word) => GREEK[word] ?? word);
+
 const COUNTS = ['tree level', 'one loop', 'two loops', 'three loops', 'four loops', 'five loops', 'six loops'];
 const RAISED: Readonly<Record<string, string>> = Object.fromEntries(
   [...'0123456789-/'].map((digit, at) => [digit, [...'⁰¹²³⁴⁵⁶⁷⁸⁹⁻⸍'][at]!]),
@@ -43,7 +56,7 @@ export function orderWords(order: ExpansionRequest['order'], through: boolean): 
   if (only?.[0] === 'total') return `${prefix}total power ${only[1]}`;
   const powers = entries
     .filter(([, power]) => power !== '0')
-    .map(([name, power]) => name + (power === '1' ? '' : raised(power)));
+    .map(([name, power]) => nameWords(name) + (power === '1' ? '' : raised(power)));
   return powers.length === 0 ? `${prefix}order zero` : `${prefix}order ${powers.join(' ')}`;
 }
 

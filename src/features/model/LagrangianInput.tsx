@@ -27,7 +27,8 @@ export function LagrangianInput({ value, onChange, marks, invalid, inputRef }: P
             </mark>
           );
         })}
-        {'\n'}
+        {/* Not a bare newline: the first one of a <pre> is dropped by the parser, and an empty text would not hydrate. */}
+        {' \n'}
       </pre>
       <textarea
         ref={inputRef}

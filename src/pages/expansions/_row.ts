@@ -1,5 +1,5 @@
 import type { ExpansionRecord } from '#contract/api.ts';
-import { keepWords, orderWords } from '#features/compose/words.ts';
+import { GREEK, keepWords, orderWords } from '#features/compose/words.ts';
 
 /** What a list shows of an expansion. */
 export interface ExpansionRow {
@@ -35,14 +35,8 @@ export function operatorLatex(name: string): string {
   return conjugate ? `${field}^{*}` : field;
 }
 
-const GREEK = new Set(
-  'alpha beta gamma delta epsilon zeta eta theta iota kappa lambda mu nu xi pi rho sigma tau upsilon phi chi psi omega Gamma Delta Theta Lambda Xi Pi Sigma Phi Psi Omega'.split(
-    ' ',
-  ),
-);
-
 function letterLatex(word: string): string {
-  if (GREEK.has(word)) return `\\${word}`;
+  if (Object.hasOwn(GREEK, word)) return `\\${word}`;
   return word.length <= 1 || /^\d+$/.test(word) ? word : `\\mathrm{${word}}`;
 }
 
