@@ -1,16 +1,12 @@
+import { Comparison, EQUAL, GREATER, LESS, UNKNOWN } from './comparison.ts';
 import type { Frame } from './frame.ts';
+import { Frontier } from './frontier.ts';
 import { Orbits } from './orbits.ts';
 
 /** Nodes of the search tree that a test of unfinished rows may visit before it lets them pass. */
 const PREFIX_BUDGET = 400;
 /** Visits after which the automorphisms found so far are used to skip equivalent choices. */
 const PATIENCE = 64;
-
-/** Verdicts on a choice: all renumberings below give smaller matrices; the same; one gives a larger; not known yet. */
-const LESS = 0;
-const EQUAL = 1;
-const GREATER = 2;
-const UNKNOWN = 3;
 
 /**
  * Is the matrix the largest of all its renumberings, read row by row? And how many renumberings leave it as it is?
@@ -34,7 +30,10 @@ export class Canonicity {
   readonly orbitSizes: Int32Array;
 
   private readonly order: Int32Array;
-  private readonly values: Int32Array;
+  private readonly comparison: Comparison;
+  private readonly frontier: Frontier;
+  /** followed[r]: the frontier holds after row r. */
+  private readonly followed: Uint8Array;
   private readonly image: Int32Array;
   private readonly orbits: Orbits;
   /** pairs[segment(r)…]: the undecided pairs d·n + v after row r; live[r]: their number. */
@@ -45,7 +44,9 @@ export class Canonicity {
   constructor(private readonly frame: Frame) {
     const { n } = frame;
     this.order = new Int32Array((n + 1) * n);
-    this.values = new Int32Array(n);
+    this.comparison = new Comparison(frame);
+    this.frontier = new Frontier(frame, this.comparison);
+    this.followed = new Uint8Array(n);
     this.image = Int32Array.from({ length: n }, (_, v) => v);
     this.orbits = new Orbits(n);
     this.pairs = new Int32Array((n * n * (n + 1)) / 2);
@@ -53,7 +54,7 @@ export class Canonicity {
     this.orbitSizes = new Int32Array(n);
   }
 
-  /** Takes note of the finished row r; false when it is larger than an earlier one in whose place it could stand. */
+  /** Takes in the finished row r; false when rows 0…r cannot begin a canonical matrix. It may say true too often. */
   enter(r: number): boolean {
     const { n, external, runEnd } = this.frame;
     const { pairs, live } = this;
@@ -63,7 +64,7 @@ export class Canonicity {
     for (let i = 0; i < count; i++) pairs[segment + i] = pairs[before + i]!;
     for (let d = external; d < r; d++) {
       if (runEnd[d * n + d]! <= r) continue;
-      const verdict = this.compareRows(d, r);
+      const verdict = this.comparison.alone(d, r);
       if (verdict === GREATER) {
         this.restsOn = r;
         return false;
@@ -71,11 +72,23 @@ export class Canonicity {
       if (verdict === EQUAL) pairs[segment + count++] = d * n + r;
     }
     live[r] = count;
-    return true;
+    return this.follow(r, segment + (r > 0 ? live[r - 1]! : 0), segment + count);
+  }
+
+  /** Goes on with what is undecided: all of it while there is little, else from the start within a budget. */
+  private follow(r: number, first: number, last: number): boolean {
+    if (r === 0 || this.followed[r - 1] === 1) {
+      const verdict = this.frontier.advance(r, this.pairs, first, last);
+      this.followed[r] = verdict === LESS ? 1 : 0;
+      if (verdict === GREATER) this.restsOn = r;
+      if (verdict !== UNKNOWN) return verdict === LESS;
+    }
+    this.followed[r] = 0;
+    return r < this.frame.external || r >= this.frame.n - 3 || this.mayBegin(r);
   }
 
   /** Whether rows 0…r may begin a canonical matrix; may say yes too often, never no. */
-  mayBegin(r: number): boolean {
+  private mayBegin(r: number): boolean {
     const { n } = this.frame;
     const { pairs } = this;
     const segment = this.segment(r);
@@ -98,7 +111,10 @@ export class Canonicity {
     const { n, external } = this.frame;
     const { orbitSizes } = this;
     for (let d = 0; d < n; d++) orbitSizes[d] = 1;
-    if (n === 0 || this.live[n - 1] === 0) return true;
+    if (this.followed[n - 1] === 1) {
+      orbitSizes[n - 1] = this.frontier.automorphisms;
+      return true;
+    }
     this.visits = 0;
     this.orbits.clear();
     for (let d = n - 2; d >= external; d--) if (!this.countOrbit(d)) return false;
@@ -113,7 +129,7 @@ export class Canonicity {
   /** Verdict on all renumberings that change no place before d and put node v, whose row is equal, at d. */
   private explore(d: number, v: number, rows: number): number {
     this.placeIdentity(d);
-    this.compare(d, v);
+    this.place(d, v);
     this.image[d] = v;
     const verdict = this.visit(d + 1, rows);
     this.image[d] = d;
@@ -164,7 +180,7 @@ export class Canonicity {
         continue;
       }
       if (tried?.seen(v)) continue;
-      let verdict = this.compare(d, at);
+      let verdict = this.place(d, at);
       if (verdict === EQUAL) {
         image[d] = v;
         verdict = this.visit(d + 1, rows);
@@ -177,74 +193,9 @@ export class Canonicity {
     return result;
   }
 
-  /** Row of node v if it alone is moved to place d, against row d. */
-  private compareRows(d: number, v: number): number {
-    const { n, matrix, runEnd } = this.frame;
-    const { values } = this;
-    const base = d * n;
-    const row = v * n;
-    const own = matrix[row + v]! - matrix[base + d]!;
-    if (own !== 0) return own > 0 ? GREATER : LESS;
-    for (let p = d + 1; p < n; ) {
-      const end = runEnd[base + p]!;
-      if (end === p + 1) {
-        const difference = matrix[row + (p === v ? d : p)]! - matrix[base + p]!;
-        if (difference !== 0) return difference > 0 ? GREATER : LESS;
-        p = end;
-        continue;
-      }
-      for (let q = p; q < end; q++) {
-        const value = matrix[row + (q === v ? d : q)]!;
-        let s = q;
-        for (; s > p && values[s - 1]! < value; s--) values[s] = values[s - 1]!;
-        values[s] = value;
-      }
-      for (; p < end; p++) {
-        const difference = values[p]! - matrix[base + p]!;
-        if (difference !== 0) return difference > 0 ? GREATER : LESS;
-      }
-    }
-    return EQUAL;
-  }
-
-  /** Row of the node at place `at` if it is moved to place d, against row d of the matrix; fills the order for place d + 1. */
-  private compare(d: number, at: number): number {
-    const { n, matrix, runEnd } = this.frame;
-    const { order, values } = this;
-    const base = d * n;
-    const next = base + n;
-    const v = order[base + at]!;
-    const row = v * n;
-    const own = matrix[row + v]! - matrix[base + d]!;
-    if (own !== 0) return own > 0 ? GREATER : LESS;
-    const first = order[base + d]!;
-    for (let p = d + 1; p < n; ) {
-      const end = runEnd[base + p]!;
-      if (end === p + 1) {
-        const u = p === at ? first : order[base + p]!;
-        const difference = matrix[row + u]! - matrix[base + p]!;
-        if (difference !== 0) return difference > 0 ? GREATER : LESS;
-        order[next + p] = u;
-        p = end;
-        continue;
-      }
-      for (let q = p; q < end; q++) {
-        const u = q === at ? first : order[base + q]!;
-        const value = matrix[row + u]!;
-        let s = q;
-        for (; s > p && values[s - 1]! < value; s--) {
-          values[s] = values[s - 1]!;
-          order[next + s] = order[next + s - 1]!;
-        }
-        values[s] = value;
-        order[next + s] = u;
-      }
-      for (; p < end; p++) {
-        const difference = values[p]! - matrix[base + p]!;
-        if (difference !== 0) return difference > 0 ? GREATER : LESS;
-      }
-    }
-    return EQUAL;
+  private place(d: number, at: number): number {
+    const base = d * this.frame.n;
+    return this.comparison.placed(this.order, base, d, at, this.order, base + this.frame.n);
   }
 
   /** The renumbering just completed is an automorphism. */

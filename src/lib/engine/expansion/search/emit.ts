@@ -5,6 +5,7 @@ import type { Frame } from './frame.ts';
 
 /** Products of small integers stay exact numbers below this. */
 const SAFE = 2 ** 53;
+const NONE: readonly number[] = [];
 
 /** What one join code between vertices i ≤ j stands for. */
 interface Bundle {
@@ -81,8 +82,9 @@ export class Emitter {
     this.large[row + 1] = large;
   }
 
-  private legs(): number[] {
+  private legs(): readonly number[] {
     const { n, external, matrix } = this.frame;
+    if (external === 0) return NONE;
     const legs: number[] = [];
     for (let i = 0; i < external; i++) {
       let j = 0;

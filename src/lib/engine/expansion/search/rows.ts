@@ -25,7 +25,8 @@ export class RowSearch {
   private readonly after: Int32Array;
   /** selfCap[r·n + j]: the largest self-join that node j may have when row r begins. */
   private readonly selfCap: Int32Array;
-  private readonly guard: number;
+  /** With one half-line type numbers alone say what fits. */
+  private readonly oneType: boolean;
   /** The first row that differs from the matrix before. */
   changed = 0;
   private started = false;
@@ -43,7 +44,7 @@ export class RowSearch {
     this.open = table.degree.slice();
     this.after = new Int32Array((n + 1) * (n + 1));
     this.selfCap = new Int32Array((n + 1) * n).fill(table.selfSize.length - 1);
-    this.guard = table.words === 1 ? table.guard[0]! : 0;
+    this.oneType = table.counts[0]!.length === 1;
     this.openRow(0);
   }
 
@@ -130,14 +131,10 @@ export class RowSearch {
   }
 
   private fits(row: number, column: number, code: number): boolean {
+    if (this.oneType) return true;
     const { table } = this.frame;
-    const { words, guard } = table;
     if (column === row) return this.covers(row, table.selfNeed, code);
-    if (words > 1) return this.covers(row, table.need, code) && this.covers(column, table.need, table.back[code]!);
-    const mask = this.guard;
-    const here = (this.left[row]! | mask) - table.need[code]!;
-    const there = (this.left[column]! | mask) - table.need[table.back[code]!]!;
-    return (here & there & mask) === guard[0];
+    return this.covers(row, table.need, code) && this.covers(column, table.need, table.back[code]!);
   }
 
   private covers(node: number, need: Int32Array, code: number): boolean {
@@ -169,6 +166,7 @@ export class RowSearch {
   }
 
   private take(node: number, need: Int32Array, code: number, sign: number): void {
+    if (this.oneType) return;
     const { words } = this.frame.table;
     for (let w = 0; w < words; w++) this.left[node * words + w]! -= sign * need[code * words + w]!;
   }
@@ -183,12 +181,11 @@ export class RowSearch {
 
   /** Tests a complete row and prepares the next; a number > row to go on, else the row to go back to. */
   private finish(row: number): number {
-    const { n, external } = this.frame;
+    const { n } = this.frame;
     if (!this.component.admits(row, this.open)) return row;
     if (!this.canonicity.enter(row)) return this.canonicity.restsOn;
     if (row + 1 === n) return this.canonicity.isCanonical() ? n : this.canonicity.restsOn;
     this.split(row);
-    if (row > external && row < n - 3 && !this.canonicity.mayBegin(row)) return this.canonicity.restsOn;
     this.openRow(row + 1);
     return row + 1;
   }
