@@ -128,8 +128,11 @@ function separator(roots: readonly bigint[]): bigint {
   return b;
 }
 
+/** Digits that a number may have while a sum of roots is rationalised. */
+const LONGEST = 120;
+
 /**
- * 1/a, or null where the field of these numbers has no inverse in closed form (sums with unlike powers of π).
+ * 1/a, or null where the field of these numbers has no inverse in closed form (sums with unlike powers of π), or only a very long one.
  *
  * Sums of roots are rationalised: with a = x + y√b, 1/a = (x − y√b)/(x² − b y²), whose denominator is free of √b.
  * @throws RangeError for zero.
@@ -143,7 +146,9 @@ export function invertNumber(a: ExactNumber): ExactNumber | null {
   const flipped = collect(
     a.parts.map((p) => (p.root % b === 0n ? { ...p, re: Q.negate(p.re), im: Q.negate(p.im) } : p)),
   );
-  const inverse = invertNumber(multiplyNumbers(a, flipped));
+  const norm = multiplyNumbers(a, flipped);
+  if (digitsOf(norm) > LONGEST) return null;
+  const inverse = invertNumber(norm);
   return inverse && multiplyNumbers(flipped, inverse);
 }
 

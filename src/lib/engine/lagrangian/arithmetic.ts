@@ -25,19 +25,30 @@ function contract(a: readonly OpenIndex[], b: readonly OpenIndex[]): { pairs: [n
   return { pairs, open: [...left, ...right] };
 }
 
+/** Powers, fields and derivatives of a monomial: what handling it costs. */
+export const sizeOf = ({ powers, factors, pairs, open }: Monomial): number =>
+  powers.length + factors.length + 2 * pairs.length + open.length;
+
+/** Steps of a product of numbers: one for two plain rationals; products of sums grow with the parts and the square of the digits. */
+function productSteps(a: ExactNumber, b: ExactNumber): number {
+  const products = a.parts.length * b.parts.length;
+  if (products === 1 && a.parts[0]!.root * b.parts[0]!.root === 1n) return 1;
+  return products * 6 * (1 + ((digitsOf(a) + digitsOf(b)) / 40) ** 2);
+}
+
 /** Budgeted arithmetic of one text: every product is counted, every bound checked before the work is done. */
 export class Arithmetic {
-  private products = 0;
+  private steps = 0;
 
   constructor(readonly source: Source) {}
 
-  /** Charges for work about to be done. @throws LimitError beyond BOUNDS.products. */
-  charge(products: number, span: Span): void {
-    this.products += products;
-    if (this.products > BOUNDS.products)
+  /** Charges for work about to be done. @throws LimitError beyond BOUNDS.steps. */
+  charge(steps: number, span: Span): void {
+    this.steps += steps;
+    if (this.steps > BOUNDS.steps)
       throw this.source.limit(
-        `Multiplying this out takes more than ${BOUNDS.products} products of monomials, the most that are done.`,
-        BOUNDS.products,
+        `Multiplying this out takes more than ${BOUNDS.steps} elementary steps, the most that are done.`,
+        BOUNDS.steps,
         null,
         span,
       );
@@ -91,6 +102,7 @@ export class Arithmetic {
   }
 
   multiplyMonomials(a: Monomial, b: Monomial, span: Span): Monomial {
+    this.charge(2 + (sizeOf(a) + sizeOf(b)) / 4 + productSteps(a.number, b.number), span);
     const shift = a.factors.length;
     const plain = a.pairs.length + a.open.length + b.pairs.length + b.open.length === 0;
     const joined = contract(
@@ -122,7 +134,6 @@ export class Arithmetic {
         bound,
         span,
       );
-    this.charge(bound, span);
     if (bound === 1) return [this.multiplyMonomials(a[0]!, b[0]!, span)];
     return this.merge(
       a.flatMap((x) => b.map((y) => this.multiplyMonomials(x, y, span))),
@@ -148,8 +159,10 @@ export class Arithmetic {
 
   /** ∂ with an index (null: without a name) by the product rule; parameters are constant. */
   derive(value: Polynomial, index: string | null, span: Span): Polynomial {
-    const terms = value.reduce((sum, m) => sum + m.factors.length, 0);
-    this.charge(terms, span);
+    this.charge(
+      value.reduce((sum, m) => sum + m.factors.length * (3 + sizeOf(m) / 4), 0),
+      span,
+    );
     const derived = value.flatMap((m) =>
       m.factors.map((_, at) => {
         const joined = contract(m.open, [{ index, at }]);

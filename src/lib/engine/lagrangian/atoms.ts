@@ -1,8 +1,9 @@
+import type { InputError } from '../errors.ts';
 import { ONE } from '../exact/rational.ts';
 import type { Node } from './ast.ts';
 import { BOUNDS } from './bounds.ts';
 import { closed, opensGroup, readGroup, startsOperand } from './groups.ts';
-import { readIndex } from './indices.ts';
+import { readIndex, refuseRaisedName } from './indices.ts';
 import type { Parser } from './parser.ts';
 import type { Token } from './tokens.ts';
 
@@ -87,6 +88,7 @@ function readOperand(parser: Parser, start: number): Node {
     if (braced && !parser.accept('}')) refusePower(parser, start, end);
     node = { is: 'conjugate', node, start: node.start, end: parser.previous!.end };
   }
+  if (parser.at('^') && parser.next.kind === 'name') refuseRaisedName(parser, node, parser.next);
   if (parser.at('^') || parser.at('**') || parser.token.kind === 'superscript') refusePower(parser, start, node.end);
   return node;
 }
@@ -110,7 +112,16 @@ function readDerivative(parser: Parser): Node {
     return { is: 'derivative', index, count, node, start, end: node.end };
   }
   if (index === null && count % 2 === 0) return { is: 'operator', count: count / 2, start, end };
-  throw parser.expected('the field that this derivative acts on');
+  throw derivativeOfNothing(parser, token);
+}
+
+/** "d" where no field follows: often meant as a name. */
+function derivativeOfNothing(parser: Parser, operator: Token): InputError {
+  if (parser.source.quote(operator) !== 'd') return parser.expected('the field that this derivative acts on');
+  return parser.fault(
+    '"d" is the sign of a derivative, and no field follows it here; a parameter needs another name.',
+    operator,
+  );
 }
 
 /** One operand without its powers. @throws InputError where none can begin. */

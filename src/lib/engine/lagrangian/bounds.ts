@@ -25,8 +25,8 @@ export const BOUNDS = {
   terms: 5_000,
   /** Monomials of one power of a sum, counted by the multinomial bound before anything is multiplied. */
   powerTerms: 1_000,
-  /** Products of two monomials in the whole text. */
-  products: 20_000,
+  /** Elementary steps (of about a microsecond each) that multiplying out the whole text may take. */
+  steps: 40_000,
   fields: 40,
   parameters: 200,
   nameLength: 40,

@@ -116,6 +116,24 @@ function canonicalOrder(m: Monomial): number[] {
   return [...rank.keys()].sort((a, b) => compareFactors(m.factors[a]!, m.factors[b]!) || rank.get(a)! - rank.get(b)!);
 }
 
+const remembered = new Map<string, number[]>();
+const REMEMBERED = 256;
+
+/** The canonical order of a shape of derivatives, kept for a while: expanded products repeat a few shapes many times. */
+function rememberedOrder(m: Monomial): number[] {
+  const shape = shapeKey(m);
+  const known = remembered.get(shape);
+  if (known) return known;
+  const order = canonicalOrder(m);
+  if (remembered.size >= REMEMBERED) remembered.clear();
+  remembered.set(shape, order);
+  return order;
+}
+
+/** Fields with their derivatives, coefficient left out. */
+export const shapeKey = ({ factors, pairs, open }: Monomial): string =>
+  `${factors.map(factorText).join(' ')}|${pairs.join(';')}|${open.map(({ index, at }) => `${index ?? ''}@${at}`).join(';')}`;
+
 /** Moves derivatives of a quadratic monomial so that each pair joins the two factors: φ□χ = −∂φ∂χ up to a total derivative. */
 function quadratic(m: Monomial): Monomial {
   const inner = m.pairs.filter(([i, j]) => i === j).length;
@@ -136,7 +154,7 @@ const comparePairs = (a: Pair, b: Pair): number => a[0] - b[0] || a[1] - b[1];
 export function canonical(m: Monomial): Monomial {
   if (m.pairs.length + m.open.length === 0) return m;
   if (m.factors.length === 2 && m.open.length === 0) return quadratic(m);
-  const order = canonicalOrder(m);
+  const order = rememberedOrder(m);
   const position = new Map(order.map((from, to) => [from, to]));
   const pairs = m.pairs.map(([i, j]): Pair => {
     const [a, b] = [position.get(i)!, position.get(j)!];

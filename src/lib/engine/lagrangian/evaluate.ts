@@ -1,6 +1,6 @@
 import { fromRational, IMAGINARY, powerOfPi } from '../exact/number.ts';
 import { format, isInteger, ONE, rational } from '../exact/rational.ts';
-import { Arithmetic } from './arithmetic.ts';
+import { Arithmetic, sizeOf } from './arithmetic.ts';
 import type { Node, Summand } from './ast.ts';
 import { conjugateTermsMissing } from './conjugates.ts';
 import type { Span } from './model.ts';
@@ -107,7 +107,10 @@ export class Evaluator {
         terms.push(...value);
       }
     }
-    this.arithmetic.charge(terms.length, span);
+    this.arithmetic.charge(
+      terms.reduce((sum, m) => sum + 1 + sizeOf(m) / 4, 0),
+      span,
+    );
     return this.arithmetic.merge(terms, span);
   }
 
@@ -128,6 +131,10 @@ export class Evaluator {
 
   /** What "+ h.c." adds to the terms before it: the conjugate of each that is not matched by its own conjugate already. */
   hermitianConjugate(terms: readonly Monomial[], span: Span): Polynomial {
+    this.arithmetic.charge(
+      terms.reduce((sum, m) => sum + 4 + sizeOf(m) / 2, 0),
+      span,
+    );
     const missing = conjugateTermsMissing(terms, this.names.complex);
     if (missing.length === 0)
       throw this.source.fault(

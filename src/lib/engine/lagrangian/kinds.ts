@@ -38,11 +38,9 @@ function loopsOf(parameters: Monomial, loops: ReadonlyMap<string, number>): numb
   return Number(sum.num) / Number(sum.den);
 }
 
-function compareKinds(a: VertexKind, b: VertexKind): number {
-  if (a.fields.length !== b.fields.length) return a.fields.length - b.fields.length;
-  const [x, y] = [`${fieldsKey(a.fields)} | ${a.coupling}`, `${fieldsKey(b.fields)} | ${b.coupling}`];
-  return x < y ? -1 : x > y ? 1 : 0;
-}
+/** Fewer fields first, then fields, then coupling: as text that sorts so. */
+const sortKey = ({ fields, coupling }: VertexKind): string =>
+  `${String(fields.length).padStart(3, '0')} ${fieldsKey(fields)} | ${coupling}`;
 
 /**
  * Groups interaction terms into kinds of vertex: one coupling monomial and one multiset of fields each, whatever the derivatives.
@@ -62,5 +60,8 @@ export function kindsOf(terms: readonly Term[], loops: ReadonlyMap<string, numbe
     couplingLatex: parametersLatex(group.parameters),
     loops: loopsOf(group.parameters, loops),
   }));
-  return kinds.sort(compareKinds);
+  return kinds
+    .map((kind) => ({ kind, key: sortKey(kind) }))
+    .sort((a, b) => (a.key < b.key ? -1 : a.key > b.key ? 1 : 0))
+    .map(({ kind }) => kind);
 }

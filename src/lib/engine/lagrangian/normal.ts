@@ -1,7 +1,8 @@
 import { addNumbers, type ExactNumber, isZeroNumber } from '../exact/number.ts';
 import type { Rational } from '../exact/rational.ts';
+import { sizeOf } from './arithmetic.ts';
 import { BOUNDS } from './bounds.ts';
-import { canonical } from './canonical.ts';
+import { canonical, shapeKey } from './canonical.ts';
 import type { FieldFactor, Note, Span, Term } from './model.ts';
 import { type Monomial, monomialKey, OPERATOR } from './monomial.ts';
 import type { Source } from './source.ts';
@@ -64,8 +65,30 @@ function droppedBecause(m: Monomial): { code: string; message: string } | null {
   return null;
 }
 
+/** Bounds what sorting, conjugating and grouping the monomials will take. @throws LimitError over BOUNDS.steps. */
+function refuseTooMuchWork(source: Source, placed: readonly Placed[]): void {
+  const shapes = new Set<string>();
+  let steps = 0;
+  for (const { monomial, span } of placed) {
+    steps += 4 * sizeOf(monomial);
+    const { length } = monomial.pairs;
+    if (length > 0 && !shapes.has(shapeKey(monomial))) {
+      shapes.add(shapeKey(monomial));
+      steps += 2 * length ** 3;
+    }
+    if (steps > BOUNDS.steps)
+      throw source.limit(
+        `Sorting the terms of this Lagrangian takes more than ${BOUNDS.steps} elementary steps, the most that are done.`,
+        BOUNDS.steps,
+        null,
+        span ?? { start: 0, end: 0 },
+      );
+  }
+}
+
 /** Collects like monomials into terms. O(n log n) for n monomials. @throws InputError for derivatives that are left open. */
 export function normalForm(source: Source, placed: readonly Placed[]): NormalForm {
+  refuseTooMuchWork(source, placed);
   const sums = new Map<string, { monomial: Monomial; number: ExactNumber; span: Span | null }>();
   for (const entry of placed) {
     refuseUnfinished(source, entry);

@@ -5,7 +5,7 @@ import { compareFactors, conjugateMonomial, type Monomial, monomialKey } from '.
 import { monomialOf, termsOf } from './terms.ts';
 
 /** Terms looked at while exchanges of fields are tried; beyond, the search is given up. */
-const BUDGET = 20_000;
+const BUDGET = 3_000;
 
 const keyed = (m: Monomial): string =>
   monomialKey(canonical(m.pairs.length === 0 ? { ...m, factors: [...m.factors].sort(compareFactors) } : m));

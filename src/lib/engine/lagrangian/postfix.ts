@@ -21,6 +21,7 @@ function conjugated(parser: Parser, base: Node): Node {
       `It is not clear whether ${parser.source.quote(parser.token)} is a power here; write (phi^*)^2 or phi^{*2}.`,
       { start: base.start, end: parser.token.end },
     );
+  if (base.is === 'conjugate') return { ...base.node, start: base.start, end };
   return { is: 'conjugate', node: base, start: base.start, end };
 }
 

@@ -87,8 +87,11 @@ export class PowerRule {
 
   inverse(value: Polynomial, span: Span, what = 'The inverse'): Polynomial {
     const only = this.single(value, what, span);
+    const { length } = only.number.parts;
+    if (length > 1) this.arithmetic.charge(500 * length * length, span);
     const number = invertNumber(only.number);
-    if (!number) throw this.source.fault('unsupported', 'This number cannot be inverted in closed form.', span);
+    if (!number)
+      throw this.source.fault('unsupported', 'This number has no inverse in closed form that is short enough.', span);
     return [
       { ...only, number: this.arithmetic.checkedNumber(number, span), powers: scalePowers(only.powers, rational(-1)) },
     ];

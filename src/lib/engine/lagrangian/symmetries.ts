@@ -9,6 +9,9 @@ export function contentOf(model: Model, factors: readonly FieldFactor[]): bigint
   return content;
 }
 
+const absolute = (n: bigint): bigint => (n < 0n ? -n : n);
+const size = (exponents: Integers): bigint => exponents.reduce((sum, n) => sum + absolute(n), 0n);
+
 /** The contents that no phase symmetry tells apart from none: those of the vertices, and two of any real field. */
 function neutralContents(model: Model): Integers[] {
   const real = model.fields.flatMap(({ kind }, at) =>
@@ -16,15 +19,13 @@ function neutralContents(model: Model): Integers[] {
   );
   const vertices = new Map(
     model.kinds.map((kind): [string, Integers] => {
-      const content = contentOf(model, kind.fields);
+      const content = contentOf(model, kind.fields).map((n, i) => (model.fields[i]!.kind === 'real' ? n % 2n : n));
       return [content.join(), content];
     }),
   );
-  return [...real, ...vertices.values()];
+  return [...real, ...[...vertices.values()].sort((a, b) => Number(size(a) - size(b)))];
 }
 
-const absolute = (n: bigint): bigint => (n < 0n ? -n : n);
-const size = (exponents: Integers): bigint => exponents.reduce((sum, n) => sum + absolute(n), 0n);
 const plus = (a: Integers, b: Integers, times: bigint): bigint[] => a.map((n, i) => n + times * b[i]!);
 
 /** Charges with the first one positive, made small by adding multiples of one another. */
