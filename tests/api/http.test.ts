@@ -124,7 +124,7 @@ describe('a body that is no request', () => {
     ['null', 422, 'bad-request'],
     ['{"lagrangian":7}', 422, 'bad-request'],
     ['{"lagrangian":"x","model":{"terms":[]}}', 422, 'bad-request'],
-    [`{"lagrangian":"${'x'.repeat(50_000)}"}`, 422, 'bad-request'],
+    [`{"lagrangian":"${'x'.repeat(50_000)}"}`, 422, 'limit'],
   ])('%# is answered with its code', async (body, status, code) => {
     const response = await post(body);
     expect(response.status).toBe(status);

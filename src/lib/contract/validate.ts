@@ -31,11 +31,12 @@ function sentence(issue: Issue): string {
 /**
  * Reads a value by its schema at the boundary.
  *
- * @throws Refusal bad-request whose sentence names the key and what was expected.
+ * @throws Refusal limit for what is longer or larger than a bound, bad-request for anything else; the sentence names the key and what was expected.
  */
 export function validate<S extends z.ZodType>(schema: S, value: unknown): z.output<S> {
   const result = schema.safeParse(value);
   if (result.success) return result.data;
   const issue = result.error.issues[0] as Issue;
-  throw new Refusal({ code: 'bad-request', message: sentence(issue), line: null, column: null });
+  const code = issue.code === 'too_big' ? 'limit' : 'bad-request';
+  throw new Refusal({ code, message: sentence(issue), line: null, column: null });
 }
