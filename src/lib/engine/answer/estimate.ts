@@ -29,6 +29,9 @@ const BYTES_PER_LINE = 9;
 /** Nothing grows faster from one order to the next than this, so that a short series is not extrapolated wildly. */
 const STEEPEST = 40;
 
+/** How much longer one class takes with each further vertex. */
+const SLOWER = 1.25;
+
 /** What was measured of one content, or one number of vertices. */
 interface Sample {
   readonly vertices: number;
@@ -97,6 +100,12 @@ function continued(sizes: readonly Sample[], vertices: number, read: (entry: Sam
   return read(last) * Math.min(Math.max(growth, 1), STEEPEST) ** (vertices - last.vertices);
 }
 
+/** Milliseconds for one class: those of the largest sample, growing gently. Small samples are too short to show a trend. */
+function timePerClass(sizes: readonly Sample[], vertices: number): number {
+  const last = sizes.at(-1);
+  return last ? (last.milliseconds / last.classes) * SLOWER ** Math.max(0, vertices - last.vertices) : 1;
+}
+
 interface Sums {
   readonly weight: Rational;
   readonly of: ReadonlyMap<string, Rational>;
@@ -125,7 +134,7 @@ function extrapolated(open: readonly Content[], sizes: readonly Sample[], sums: 
         ? continued(sizes, vertices, (entry) => entry.classes)
         : weight * continued(sizes, vertices, (entry) => entry.classes / numeric(entry.weight));
     classes += Math.max(expected, weight === null || weight === 0 ? 0 : 1);
-    milliseconds += expected * continued(sizes, vertices, (entry) => entry.milliseconds / entry.classes);
+    milliseconds += expected * timePerClass(sizes, vertices);
   }
   return { classes: Math.ceil(classes), milliseconds };
 }
