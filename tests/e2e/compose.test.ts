@@ -14,7 +14,7 @@ const typed = (query: string, lagrangian = PORTAL) =>
 
 const countOf = (page: Page) => page.locator('.expected-count');
 /** Where an expansion has been made: its own page. */
-const MADE = /\/expansions\/[0-9a-z]{24}$/;
+const MADE = /\/expansions\/([0-9a-z]{24})$/;
 
 describe('composing', () => {
   it('goes from a typed Lagrangian to an expansion by keyboard alone, as a visitor', async () => {
@@ -99,7 +99,11 @@ describe('composing', () => {
     const stored = page.getByRole('link', { name: 'open the stored list' });
     await page.getByLabel('Or type them').fill('h h s s');
     await stored.waitFor({ timeout: 30_000 });
-    expect(await stored.getAttribute('href')).toMatch(MADE);
+    const id = MADE.exec((await stored.getAttribute('href'))!)![1];
+    await page.goto(`/expansions/new?from=${id}`);
+    expect(await page.getByLabel('Or type them').inputValue()).toBe('h h s s');
+    expect(await page.getByRole('radio', { name: '1PI' }).isChecked()).toBe(true);
+    expect(await page.getByRole('heading', { level: 2, name: 'Saltmarsh portal' }).count()).toBe(1);
   });
 });
 
@@ -109,12 +113,12 @@ describe('without JavaScript', () => {
     await page.getByRole('textbox', { name: 'Lagrangian' }).fill(PORTAL);
     await page.getByLabel('Field operators, in order').fill('h h q');
     await page.getByLabel('Powers of couplings').check();
-    await page.getByLabel('Connected').check();
-    await page.getByLabel('Tadpoles').check();
+    await page.getByRole('radio', { name: 'Connected W' }).check();
+    await page.getByRole('checkbox', { name: 'Tadpoles' }).check();
     await page.getByRole('button', { name: 'Expand' }).click();
     expect(await page.locator('#legs-error').textContent()).toContain('q');
-    expect(await page.getByLabel('Connected').isChecked()).toBe(true);
-    expect(await page.getByLabel('Tadpoles').isChecked()).toBe(true);
+    expect(await page.getByRole('radio', { name: 'Connected W' }).isChecked()).toBe(true);
+    expect(await page.getByRole('checkbox', { name: 'Tadpoles' }).isChecked()).toBe(true);
     expect(await page.getByRole('textbox', { name: 'Lagrangian' }).inputValue()).toBe(PORTAL);
     await page.getByLabel('power of rho').fill('1');
     await page.getByLabel('Field operators, in order').fill('h h s s');
@@ -125,9 +129,16 @@ describe('without JavaScript', () => {
     await page.waitForURL(MADE);
   });
 
-  it('lists computations, with a form to start a cancelled one again', async () => {
-    const page = await stage.openAs('author', '/jobs', { javaScriptEnabled: false });
-    expect(await page.getByRole('heading', { level: 1 }).textContent()).toBe('Jobs');
+  it('cancels a computation and starts it again by plain forms', async () => {
+    const ask = typed('legs=h+h&by=loops&loops=3&keep=1PI&title=test+job:+slow');
+    const page = await stage.openAs('author', ask, { javaScriptEnabled: false });
+    await page.getByRole('button', { name: 'Expand' }).click();
+    await page.waitForURL(MADE);
+    await page.goto('/jobs');
+    await page.getByRole('button', { name: 'Cancel: test job: slow' }).click();
+    await page.getByRole('button', { name: 'Try again: test job: slow' }).click();
+    await page.getByRole('button', { name: 'Cancel: test job: slow' }).click();
+    expect(await page.getByRole('region', { name: 'Ended' }).textContent()).toContain('Cancelled');
   });
 });
 
@@ -152,14 +163,13 @@ describe('computations', () => {
 describe('every screen', () => {
   const screens = ['/expansions/new', typed('legs=h+h+s+s&by=powers&power:rho=2&keep=1PI'), '/expansions', '/jobs'];
 
-  it('has no accessibility fault in light and dark, and fits a phone', async () => {
-    for (const colorScheme of ['light', 'dark'] as const)
-      for (const path of screens) {
-        const page = await stage.open(path, { ...PHONE, colorScheme });
-        await alive(page);
-        expect([path, await faults(page), await overflows(page)]).toEqual([path, [], false]);
-        await page.context().close();
-      }
+  it.each(['light', 'dark'] as const)('has no accessibility fault in %s, and fits a phone', async (colorScheme) => {
+    for (const path of screens) {
+      const page = await stage.open(path, { ...PHONE, colorScheme });
+      await alive(page);
+      expect([path, await faults(page), await overflows(page)]).toEqual([path, [], false]);
+      await page.context().close();
+    }
   });
 
   it('writes no error to the console', () => {

@@ -21,7 +21,7 @@ export function Asked({ ask, operators, order }: AskedProps) {
             'vacuum'
           ) : (
             <>
-              ⟨
+              ⟨{legs.length === 0 && '…'}
               {legs.map((leg, index) => {
                 const known = operatorFor(operators, leg);
                 // biome-ignore lint/suspicious/noArrayIndexKey: a leg is its place

@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
-import { type FormEvent, useState } from 'react';
+import { type FormEvent, useEffect, useState } from 'react';
 import type { ModelPreview } from '#contract/api.ts';
 import type { ErrorObject } from '#contract/errors.ts';
 import type { ModelInput } from '#contract/request.ts';
@@ -54,7 +54,7 @@ function Form({
   const edit = (part: Partial<Ask>) => setAsk((old) => ({ ...old, ...part }));
   const [firstDraft] = useState(() => draftOf(firstInput));
   const [draft, setDraft] = useState(firstDraft);
-  const [sending, setSending] = useState(false);
+  const [sending, setSending] = useSending();
   const { preview } = usePreview(draft, { draft: firstDraft, preview: firstPreview });
   const input = model ? firstInput : inputOf(draft);
   const readable = preview.ok && (input.model !== undefined || (input.lagrangian ?? '').trim() !== '');
@@ -135,6 +135,17 @@ function Form({
       </div>
     </form>
   );
+}
+
+/** Whether the form is under way; coming back to the page as it was left, it no longer is. */
+function useSending() {
+  const [sending, setSending] = useState(false);
+  useEffect(() => {
+    const back = () => setSending(false);
+    window.addEventListener('pageshow', back);
+    return () => window.removeEventListener('pageshow', back);
+  }, []);
+  return [sending, setSending] as const;
 }
 
 function TitleField({ ask, edit }: { readonly ask: Ask; readonly edit: (part: Partial<Ask>) => void }) {

@@ -4,7 +4,7 @@ import type { ModelInput } from '#contract/request.ts';
 import { signatures } from '#features/model/draft.ts';
 import { Formula } from '#features/model/parts.tsx';
 import { Scroll } from './Scroll.tsx';
-import { timeWords } from './words.ts';
+import { monomialWords, timeWords } from './words.ts';
 
 interface Props {
   readonly input: ModelInput;
@@ -40,7 +40,8 @@ export function Facts({ input: { conventions }, preview: { rules }, signedIn }: 
             <ul className="vertex-list">
               {rules.vertices.slice(0, MOST_VERTICES).map(({ fields, factor }, at) => (
                 <li key={`${fields.join(' ')} ${factor}`}>
-                  <span>{fields.join(' ')}</span> <Formula html={inline(rules.mathml.vertices[at] ?? '')} />
+                  <span className="m">{monomialWords(fields)}</span>{' '}
+                  <Formula html={inline(rules.mathml.vertices[at] ?? '')} />
                 </li>
               ))}
             </ul>

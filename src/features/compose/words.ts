@@ -24,8 +24,8 @@ export const DROP_WORDS: Readonly<Record<Drop, Choice>> = {
 
 export const ORDER_WORDS: Readonly<Record<OrderBy, Choice>> = {
   loops: { label: 'Loops', text: 'L = I − V + C; loop orders of counterterms included' },
-  powers: { label: 'Powers of couplings', text: 'the exact power of each; empty is 0' },
-  total: { label: 'Total power', text: 'the sum of all powers, weighted' },
+  powers: { label: 'Powers of couplings', text: 'The exact power of each; empty is 0' },
+  total: { label: 'Total power', text: 'The sum of all powers, weighted' },
 };
 
 /** Greek letters by their names. */
@@ -46,6 +46,15 @@ const RAISED: Readonly<Record<string, string>> = Object.fromEntries(
   [...'0123456789-/'].map((digit, at) => [digit, [...'⁰¹²³⁴⁵⁶⁷⁸⁹⁻⸍'][at]!]),
 );
 const raised = (power: string): string => [...power].map((digit) => RAISED[digit] ?? digit).join('');
+
+/** "h h s s" as "h² s²", "phi phi^*" as "φ φ*": the fields of a vertex. */
+export function monomialWords(fields: readonly string[]): string {
+  const counts = new Map<string, number>();
+  for (const field of fields) counts.set(field, (counts.get(field) ?? 0) + 1);
+  return [...counts]
+    .map(([field, n]) => nameWords(field).replace('^*', '*') + (n === 1 ? '' : raised(String(n))))
+    .join(' ');
+}
 
 /** "through two loops", "order lambda²": an order in words. */
 export function orderWords(order: ExpansionRequest['order'], through: boolean): string {

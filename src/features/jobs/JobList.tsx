@@ -114,6 +114,7 @@ function Row({ job, now }: { readonly job: Job; readonly now: number }) {
         )}
         <p className="quiet">
           <span className={`state state-${job.state}`}>{STATES[job.state]}</span> · {standing(job, now)}
+          {job.finishedAt && ` · ${whenOf(job.finishedAt)}`}
         </p>
       </div>
       {job.mine && (
@@ -126,6 +127,9 @@ function Row({ job, now }: { readonly job: Job; readonly now: number }) {
     </li>
   );
 }
+
+/** A stored time for people: minutes, UTC. */
+const whenOf = (time: string): string => `${time.slice(0, 10)} ${time.slice(11, 16)} UTC`;
 
 const Act = ({ intent, label, of }: { readonly intent: string; readonly label: string; readonly of: string }) => (
   <button type="submit" name="intent" value={intent} className="btn btn-small" aria-label={`${label}: ${of}`}>

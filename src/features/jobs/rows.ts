@@ -38,10 +38,10 @@ export function shareOf({ fraction, classes, estimated }: Job['progress']): numb
   return estimated === null || estimated <= 0 ? null : Math.min(1, classes / estimated);
 }
 
-/** How a computation stands, in a line. @param now milliseconds of the clock that createdAt is compared with */
+/** How a computation stands, after its state, in a line. @param now milliseconds of the clock that createdAt is compared with */
 export function standing(job: Job, now: number): string {
   const { state, progress, createdAt } = job;
-  if (state === 'queued') return `Waiting for its turn, ${elapsedWords(now - Date.parse(createdAt))}`;
+  if (state === 'queued') return `${elapsedWords(now - Date.parse(createdAt))} so far`;
   if (state === 'running') {
     const expected = progress.estimated === null ? '' : ` of ${countWords(progress.estimated, 'estimate')}`;
     const so = expected === '' ? countWords(progress.classes, 'exact') : String(progress.classes);
@@ -57,6 +57,5 @@ function ended({ state, classes, milliseconds, reused, failure }: Job): string {
   }
   if (state === 'unbalanced')
     return 'Its ledger does not balance: a defect of the program, which has been written to the log.';
-  if (state === 'cancelled') return 'Cancelled.';
-  return failure ?? 'It ended without a result.';
+  return failure ?? 'without a result';
 }

@@ -17,7 +17,7 @@ import {
 import { firstLegs, moved, operatorFor, operatorsOf, spokenCorrelator, without } from '#features/compose/operators.ts';
 import { placeOf, sentenceOf } from '#features/compose/refusals.ts';
 import { whyNone } from '#features/compose/vanish.ts';
-import { countWords, elapsedWords, keepWords, orderWords, timeWords } from '#features/compose/words.ts';
+import { countWords, elapsedWords, keepWords, monomialWords, orderWords, timeWords } from '#features/compose/words.ts';
 
 const model = (lagrangian: string): ModelInput => ({
   lagrangian,
@@ -239,6 +239,11 @@ describe('words', () => {
     expect(orderWords({ total: '1/2' }, false)).toBe('total power 1/2');
     expect(orderWords({ lambda: 2, rho: 1, sigma: 0 }, false)).toBe('order λ² ρ');
     expect(orderWords({}, false)).toBe('order zero');
+  });
+
+  it('say the fields of a vertex as a monomial', () => {
+    expect(monomialWords(['h', 'h', 's', 's'])).toBe('h² s²');
+    expect(monomialWords(['phi', 'phi_1', 'phi^*', 'phi^*'])).toBe('φ φ_1 φ*²');
   });
 
   it('say what is kept and dropped', () => {

@@ -25,6 +25,10 @@ describe('how a computation stands', () => {
     expect(standing(job({ progress: open }), at)).toBe('1 diagram, 1 min 5 s');
   });
 
+  it('while it waits', () => {
+    expect(standing(job({ state: 'queued' }), at)).toBe('1 min 5 s so far');
+  });
+
   it('when it has ended', () => {
     expect(standing(job({ state: 'complete', classes: 7, milliseconds: 120 }), at)).toBe(
       '7 diagrams, computed in under a second, balanced',
@@ -33,6 +37,7 @@ describe('how a computation stands', () => {
     expect(standing(job({ state: 'failed', failure: 'It took longer than 900 s.' }), at)).toBe(
       'It took longer than 900 s.',
     );
+    expect(standing(job({ state: 'cancelled' }), at)).toBe('without a result');
     expect(standing(job({ state: 'unbalanced' }), at)).toContain('defect');
   });
 
