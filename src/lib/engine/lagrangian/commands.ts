@@ -1,4 +1,4 @@
-import { isNamedCommand, VARIANTS } from './symbols.ts';
+import { GREEK, isNamedCommand, VARIANTS } from './symbols.ts';
 
 /** What a LaTeX command means to the reader. */
 export type Meaning =
@@ -89,6 +89,10 @@ export const ENVIRONMENTS: ReadonlySet<string> = new Set(
     (name) => [name, `${name}*`],
   ),
 );
+
+/** Every command of letters that has a meaning or a refusal of its own. */
+export const knownCommands = (): readonly string[] =>
+  [...GREEK, ...VARIANTS.keys(), ...FIXED.keys()].filter((name) => /^[A-Za-z]/.test(name));
 
 /** The meaning of the command \name, or null when the language does not know it. */
 export function meaningOf(name: string): Meaning | null {

@@ -3,6 +3,7 @@ import { type Node, unwrapped, walk } from './ast.ts';
 import type { Settings } from './input.ts';
 import type { Note, Span } from './model.ts';
 import type { Usage } from './names.ts';
+import { nearest } from './nearest.ts';
 import type { Source } from './source.ts';
 import { GREEK, LORENTZ } from './symbols.ts';
 
@@ -130,6 +131,11 @@ function gluedNotes(usage: Usage, fields: ReadonlySet<string>): Note[] {
 
 function similarNotes(usage: Usage): Note[] {
   return [...usage.first].flatMap(([name, span]) => {
+    const meant = /^[A-Za-z]{4,}$/.test(name) && !GREEK.has(name) ? nearest(name, GREEK) : null;
+    if (meant !== null && meant.length > 4)
+      return [
+        { code: 'spelling', message: `"${name}" is a name of its own here; "${meant}" is spelt otherwise.`, span },
+      ];
     const match = /^([A-Za-z]+)(\d+)$/.exec(name);
     if (!match || !usage.first.has(`${match[1]}_${match[2]}`)) return [];
     return [{ code: 'similar-names', message: `"${name}" and "${match[1]}_${match[2]}" are two names here.`, span }];

@@ -1,8 +1,10 @@
+import type { InputError } from '../errors.ts';
 import { rational } from '../exact/rational.ts';
 import { BOUNDS } from './bounds.ts';
-import { ENVIRONMENTS, type Meaning, meaningOf } from './commands.ts';
+import { ENVIRONMENTS, knownCommands, type Meaning, meaningOf } from './commands.ts';
 import { Cursor, isDigit, isLetter } from './cursor.ts';
 import { FractionArguments } from './fractionArguments.ts';
+import { nearest } from './nearest.ts';
 import { readNumeral, readRaised } from './numerals.ts';
 import type { Source } from './source.ts';
 import { FRACTIONS, GREEK, greekName, LORENTZ, superscriptDigit } from './symbols.ts';
@@ -152,13 +154,16 @@ function command(cursor: Cursor): Word {
   const start = cursor.at;
   const name = cursor.commandName();
   const meaning = meaningOf(name);
-  if (meaning === null)
-    throw cursor.fault(
-      'syntax',
-      `The command \\${name} is not known here; expected a field, a parameter or a sign.`,
-      start,
-    );
+  if (meaning === null) throw unknownCommand(cursor, name, start);
   return meant(cursor, meaning, name, start);
+}
+
+function unknownCommand(cursor: Cursor, name: string, start: number): InputError {
+  const close = nearest(name, knownCommands());
+  const shown = name.length > 30 ? `${name.slice(0, 29)}…` : name;
+  const hint = close === null ? 'expected a field, a parameter or a sign' : `\\${close} is`;
+  const message = `The command \\${shown} is not known here; ${hint}.`;
+  return cursor.source.fault('syntax', message, { start, end: cursor.at }, close === null ? null : `\\${close}`);
 }
 
 function meant(cursor: Cursor, meaning: Meaning, name: string, start: number): Word {
