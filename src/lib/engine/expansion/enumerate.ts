@@ -4,6 +4,21 @@ import { Emitter } from './search/emit.ts';
 import { type Components, newFrame } from './search/frame.ts';
 import { RowSearch } from './search/rows.ts';
 
+/** Whether all half-lines can be contracted at all, and, if asked, with enough lines to hang together. O(kinds · types). */
+function contractible(
+  { partner, kinds }: Theory,
+  legs: readonly number[],
+  content: Content,
+  connected: boolean,
+): boolean {
+  const halfLines = partner.map(
+    (_, h) => legs.filter((type) => type === h).length + content.reduce((sum, n, k) => sum + n * kinds[k]![h]!, 0),
+  );
+  const balanced = partner.every((p, h) => (p === h ? halfLines[h]! % 2 === 0 : halfLines[h] === halfLines[p]));
+  const nodes = content.reduce((sum, n) => sum + n, legs.length);
+  return balanced && (!connected || halfLines.reduce((sum, n) => sum + n, 0) >= 2 * (nodes - 1));
+}
+
 /**
  * Every class of contractions of the given vertices and external points exactly once, with the order of its automorphism
  * group; as a stream in an order that depends on the arguments only. Memory is that of one diagram.
@@ -17,6 +32,7 @@ export function* enumerateContent(
   content: Content,
   options: { components: Components; stop?: () => boolean },
 ): Generator<CountedDiagram> {
+  if (!contractible(theory, legs, content, options.components === 'connected')) return;
   const frame = newFrame(theory, legs, content);
   if (frame.n === 0) {
     if (options.components !== 'connected') yield { kinds: [], legs: [], lines: [], symmetryFactor: 1n };

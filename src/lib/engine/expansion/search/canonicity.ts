@@ -1,12 +1,10 @@
 import { Comparison, EQUAL, GREATER, LESS, UNKNOWN } from './comparison.ts';
 import type { Frame } from './frame.ts';
 import { Frontier } from './frontier.ts';
-import { Orbits } from './orbits.ts';
+import { type Equivalence, Orbits } from './orbits.ts';
 
 /** Nodes of the search tree that a test of unfinished rows may visit before it lets them pass. */
 const PREFIX_BUDGET = 400;
-/** Visits after which the automorphisms found so far are used to skip equivalent choices. */
-const PATIENCE = 64;
 
 /**
  * Is the matrix the largest of all its renumberings, read row by row? And how many renumberings leave it as it is?
@@ -39,6 +37,8 @@ export class Canonicity {
   /** pairs[segment(r)…]: the undecided pairs d·n + v after row r; live[r]: their number. */
   private readonly pairs: Int32Array;
   private readonly live: Int32Array;
+  /** Nodes that no automorphism puts at the place in hand. */
+  private readonly failed: Int32Array;
   private visits = 0;
 
   constructor(private readonly frame: Frame) {
@@ -49,6 +49,7 @@ export class Canonicity {
     this.followed = new Uint8Array(n);
     this.image = Int32Array.from({ length: n }, (_, v) => v);
     this.orbits = new Orbits(n);
+    this.failed = new Int32Array(n);
     this.pairs = new Int32Array((n * n * (n + 1)) / 2);
     this.live = new Int32Array(n);
     this.orbitSizes = new Int32Array(n);
@@ -145,15 +146,23 @@ export class Canonicity {
     const end = segment + this.live[n - 1]!;
     const low = d * n;
     let size = 1;
+    let failures = 0;
     for (let i = segment; i < end; i++) {
       const v = pairs[i]! - low;
       if (v < 0 || v >= n) continue;
+      if (this.failedBefore(v, failures)) continue;
       const verdict = orbits.joined(d, v) ? EQUAL : this.explore(d, v, n);
       if (verdict === GREATER) return false;
       if (verdict === EQUAL) size++;
+      else this.failed[failures++] = v;
     }
     this.orbitSizes[d] = size;
     return true;
+  }
+
+  private failedBefore(v: number, failures: number): boolean {
+    for (let i = 0; i < failures; i++) if (this.orbits.joined(this.failed[i]!, v)) return true;
+    return false;
   }
 
   private placeIdentity(d: number): void {
@@ -170,8 +179,7 @@ export class Canonicity {
     const { order, image } = this;
     const base = d * n;
     const end = runEnd[base + d]!;
-    const careful = rows === n && this.visits > PATIENCE && end > d + 1 && this.orbits.found.length > 0;
-    const tried = careful ? this.orbits.fixing(image, d) : null;
+    let equivalent: Equivalence | null = null;
     let result = LESS;
     for (let at = d; at < end; at++) {
       const v = order[base + at]!;
@@ -179,12 +187,13 @@ export class Canonicity {
         result = UNKNOWN;
         continue;
       }
-      if (tried?.seen(v)) continue;
       let verdict = this.place(d, at);
       if (verdict === EQUAL) {
+        if (equivalent?.toEarlier(v)) continue;
         image[d] = v;
         verdict = this.visit(d + 1, rows);
         image[d] = d;
+        if (verdict === LESS && rows === n) equivalent = this.orbits.remember(equivalent, image, d, v);
       } else if (verdict === GREATER) this.restsOn = d;
       if (verdict === GREATER && v > this.restsOn) this.restsOn = v;
       if (verdict === EQUAL || verdict === GREATER) return verdict;
@@ -200,7 +209,7 @@ export class Canonicity {
 
   /** The renumbering just completed is an automorphism. */
   private record(): number {
-    this.orbits.add(this.image.slice());
+    this.orbits.add(this.image);
     return EQUAL;
   }
 }
