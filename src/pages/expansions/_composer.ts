@@ -11,7 +11,8 @@ import { firstLegs } from '#features/compose/operators.ts';
 import { EMPTY, inputOf } from '#features/model/draft.ts';
 import { draftFromForm } from '#features/model/form.ts';
 import { createExpansion, estimateExpansion, getExpansion } from '#server/expansions.ts';
-import { getModel, getRevision } from '#server/models.ts';
+import { stableJson } from '#server/ids.ts';
+import { getModel, getRevision, listRevisions } from '#server/models.ts';
 import { previewModel } from '#server/preview.ts';
 import { errorOf, isAnswer } from '#server/refusal.ts';
 import { runtime } from '#server/runtime.ts';
@@ -83,7 +84,7 @@ function storedModel(record: ModelRecord, { url, locals }: AstroGlobal): Pick<St
   };
 }
 
-/** The model of a stored expansion: the revision it was made of where that is still the newest, else as it was. */
+/** The model of a stored expansion: the revision it was made of where that can be seen, else the text as it was. */
 function sameModel(
   { locals }: AstroGlobal,
   request: ModelInput,
@@ -100,16 +101,19 @@ function sameModel(
   };
   try {
     const record = modelId === null ? null : getModel(locals.viewer, modelId);
-    if (record && JSON.stringify(record.input) === JSON.stringify(input))
+    const same = record && listRevisions(locals.viewer, record.id).find((one) => sameInput(one.input, input));
+    if (record && same)
       return {
         input,
-        model: { id: record.id, title: record.title, revision: record.revision, newest: record.revision },
+        model: { id: record.id, title: record.title, revision: same.number, newest: record.revision },
       };
   } catch (error) {
     if (!isAnswer(error)) throw error;
   }
   return { input };
 }
+
+const sameInput = (one: ModelInput, other: ModelInput): boolean => stableJson(one) === stableJson(other);
 
 function parsed(text: string): unknown {
   try {
