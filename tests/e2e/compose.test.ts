@@ -28,7 +28,7 @@ describe('composing', () => {
       await button.focus();
       await page.keyboard.press('Enter');
     }
-    expect(await page.getByLabel('Or type them').inputValue()).toBe('h h s s');
+    expect(await page.getByLabel('Field operators, in order').inputValue()).toBe('h h s s');
     // ⟨h h s s⟩ at one loop, 1PI: λρ and ρσ in the s-channel, ρ² in t and u (counted by hand).
     await page.getByText('4 diagrams', { exact: true }).waitFor();
     await page.getByRole('button', { name: 'Expand' }).focus();
@@ -43,7 +43,7 @@ describe('composing', () => {
   it('moves and removes legs by keys, and keeps the question in the address', async () => {
     const page = await stage.open(typed('legs=h+s+h+s&by=loops&loops=1&keep=1PI'));
     await alive(page);
-    const text = page.getByLabel('Or type them');
+    const text = page.getByLabel('Field operators, in order');
     await page.getByRole('button', { name: 'Leg 2, s' }).focus();
     await page.keyboard.press('Shift+ArrowRight');
     expect(await text.inputValue()).toBe('h h s s');
@@ -60,7 +60,7 @@ describe('composing', () => {
   it('shows each refusal at the field it concerns, and sends nothing that is refused', async () => {
     const page = await stage.open(typed('legs=h+q&by=loops&loops=1&keep=1PI'));
     await alive(page);
-    const legs = page.getByLabel('Or type them');
+    const legs = page.getByLabel('Field operators, in order');
     expect(await page.locator('#legs-error').textContent()).toContain('q');
     await page.getByRole('button', { name: 'Expand' }).focus();
     await page.keyboard.press('Enter');
@@ -97,11 +97,11 @@ describe('composing', () => {
     );
     await alive(page);
     const stored = page.getByRole('link', { name: 'open the stored list' });
-    await page.getByLabel('Or type them').fill('h h s s');
+    await page.getByLabel('Field operators, in order').fill('h h s s');
     await stored.waitFor({ timeout: 30_000 });
     const id = MADE.exec((await stored.getAttribute('href'))!)![1];
     await page.goto(`/expansions/new?from=${id}`);
-    expect(await page.getByLabel('Or type them').inputValue()).toBe('h h s s');
+    expect(await page.getByLabel('Field operators, in order').inputValue()).toBe('h h s s');
     expect(await page.getByRole('radio', { name: '1PI' }).isChecked()).toBe(true);
     expect(await page.getByRole('heading', { level: 2, name: 'Saltmarsh portal' }).count()).toBe(1);
   });

@@ -94,13 +94,7 @@ function Form({
             alive={alive}
           />
         )}
-        <Legs
-          operators={operators}
-          value={ask.legs}
-          onChange={(legs) => edit({ legs })}
-          error={at('legs')}
-          alive={alive}
-        />
+        <Legs operators={operators} value={ask.legs} onChange={(legs) => edit({ legs })} error={at('legs')} />
         <Order ask={ask} edit={edit} parameters={preview.parameters} error={at('order')} />
         <Choices ask={ask} edit={edit} />
         <TitleField ask={ask} edit={edit} />
@@ -114,11 +108,9 @@ function Form({
               {alive ? spoken : ''}
             </span>
             <div className="row">
-              {!alive && (
-                <button type="submit" name="intent" value="estimate" className="btn">
-                  Count first
-                </button>
-              )}
+              <button type="submit" name="intent" value="estimate" className="btn only-scriptless">
+                Count first
+              </button>
               <button
                 type="submit"
                 name="intent"
@@ -160,7 +152,7 @@ function TitleField({ ask, edit }: { readonly ask: Ask; readonly edit: (part: Pa
         className="input"
         maxLength={200}
         value={ask.title}
-        placeholder="Made of the request"
+        placeholder="Made from the request"
         onChange={({ target }) => edit({ title: target.value })}
       />
     </div>

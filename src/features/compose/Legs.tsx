@@ -9,18 +9,17 @@ interface Props {
   readonly value: string;
   readonly onChange: (legs: string) => void;
   readonly error: string | null;
-  readonly alive: boolean;
 }
 
 /** The legs of the correlator: by buttons of the field operators, by keys, or typed. */
-export function Legs({ operators, value, onChange, error, alive }: Props) {
+export function Legs({ operators, value, onChange, error }: Props) {
   const legs = legsOf(value);
   const full = legs.length >= LIMITS.legs;
   return (
     <fieldset className="ask-part" id="part-legs">
       <legend>Legs</legend>
-      {alive && operators.length > 0 && (
-        <>
+      {operators.length > 0 && (
+        <div className="needs-script leg-part">
           <LegList operators={operators} legs={legs} onChange={(next) => onChange(next.join(' '))} />
           <fieldset className="row leg-add">
             <legend className="sr-only">Add a leg</legend>
@@ -42,10 +41,10 @@ export function Legs({ operators, value, onChange, error, alive }: Props) {
               </button>
             )}
           </fieldset>
-        </>
+        </div>
       )}
       <div className="field">
-        <label htmlFor="legs">{alive && operators.length > 0 ? 'Or type them' : 'Field operators, in order'}</label>
+        <label htmlFor="legs">Field operators, in order</label>
         <input
           id="legs"
           name="legs"

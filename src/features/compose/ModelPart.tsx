@@ -95,7 +95,7 @@ export function Typed({ draft, edit, preview, alive }: TypedProps) {
           <Formula html={preview.mathml} />
         </Scroll>
       )}
-      {alive && <Examples onChoose={({ input: chosen }) => edit(draftOf(chosen))} />}
+      <Examples onChoose={({ input: chosen }) => edit(draftOf(chosen))} />
       <Overrides draft={draft} />
     </section>
   );
