@@ -34,7 +34,7 @@ const TABLE: readonly (readonly [text: string, code: string, marked: string, sen
   [`${K}- g phi^3 d phi`, 'syntax', '- g phi^3 d phi', /without a partner/],
   [`${K}- g phi^3 d_mu phi`, 'syntax', '- g phi^3 d_mu phi', /index mu stands only once/],
   [`${K}- d_mu phi d^mu phi d_mu phi`, 'syntax', 'd_mu phi d^mu phi d_mu phi', /more than twice/],
-  [`${K}- g d phi^2 d phi`, 'syntax', 'd phi^2'.slice(0, 6), /not clear whether the power/],
+  [`${K}- g d phi^2 d phi`, 'syntax', 'd phi^', /not clear whether the power/],
   [`${K}- g phi^3 d^2`, 'syntax', '- g phi^3 d^2', /no field on its right/],
   [`${K}- g' phi^4`, 'syntax', "'", /prime/],
   [`${K}- g ± phi^4`, 'syntax', '±', /must be \+ or −/],

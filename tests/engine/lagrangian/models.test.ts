@@ -15,7 +15,7 @@ const TABLE: readonly (readonly [text: string, propagators: readonly string[], k
   ],
   [
     '1/2 (d h)^2 - 1/2 M^2 h^2 - lambda v^2/2 h^2 - lambda v h^3 - lambda/4 h^4',
-    ['h: Z = 1, M^2 = 2 M:2 + lambda:1 v:2'.replace('2 M:2', '1 M:2').replace('+ lambda', '+ 1 lambda')],
+    ['h: Z = 1, M^2 = 1 M:2 + 1 lambda:1 v:2'],
     ['lambda*v: h h h: -1', 'lambda: h h h h: -1/4'],
   ],
   [

@@ -33,7 +33,7 @@ const SAME: readonly (readonly [string, readonly string[]])[] = [
       '1/2 [ (d phi)^2 - { m^2 phi^2 } ] - lambda/(4*3*2*1) phi^4',
       '+ 1/2 (d phi)^2 + - 1/2 m^2 phi^2 - lambda/4! phi phi phi phi',
       '1/2 (d phi)^2 - 1/2 m^2 phi^2 - 1/4! lambda phi^{4}',
-      '2^-1 (d phi)^2 - 2^{-1} m^2 phi^2 - λ 4!⁻¹ φ⁴'.replace('4!⁻¹', '(4!)⁻¹'),
+      '2^-1 (d phi)^2 - 2^{-1} m^2 phi^2 - λ (4!)⁻¹ φ⁴',
       '1/2 (d\u200b phi)^2 \u2212 1/2 m^2 phi^2 \u2013 lambda/4! phi^4',
     ],
   ],

@@ -118,7 +118,7 @@ function invertPart({ re, im, pi, root }: NumberPart): ExactNumber {
 
 /** A divisor b > 1 of some root such that every root is divisible by b or prime to it: √b → −√b is then an automorphism. */
 function separator(roots: readonly bigint[]): bigint {
-  let b = roots.reduce((largest, root) => (root > largest ? root : largest), 1n);
+  let b = roots.toSorted((x, y) => Number(y - x))[0] ?? 1n;
   for (let i = 0; i < roots.length; i++) {
     const g = greatestCommonDivisor(b, roots[i]!);
     if (g === 1n || g === b) continue;

@@ -6,7 +6,7 @@ import {
   numberSign,
   rationalValue,
 } from '../exact/number.ts';
-import { equals, multiply, type Rational, rational, sign, subtract } from '../exact/rational.ts';
+import { divide, type Rational, rational, sign, subtract } from '../exact/rational.ts';
 import { parametersText } from './kinds.ts';
 import type { Model, Term } from './model.ts';
 import { multiplyPowers, type Powers, scalePowers } from './monomial.ts';
@@ -95,15 +95,17 @@ function discriminant(a: Summand, b: Summand, c: Summand): Rational | null {
   return square && product && subtract(square, product);
 }
 
-/** A number times parameters of definite sign, written without its sign. */
-function sizeText({ number, powers }: Summand): string {
-  const value = rationalValue(number);
-  const name = parametersText(new Map(powers));
-  if (!value) return `c·${name}`;
-  const size = sign(value) < 0 ? multiply(value, rational(-1)) : value;
-  if (equals(size, rational(1))) return name;
-  const text = size.den === 1n ? `${size.num}` : `${size.num}/${size.den}`;
-  return name === '1' ? text : `${text} ${name}`;
+const times = (size: bigint, name: string): string =>
+  name === '1' ? `${size}` : size === 1n ? name : `${size} ${name}`;
+
+/** b² < 4ac with the numbers in lowest terms: "b^2 < 4 a*c"; null when a number is not rational. */
+function conditionText(a: Summand, b: Summand, c: Summand): string | null {
+  const square = rationalValue(multiplyNumbers(b.number, b.number));
+  const product = rationalValue(multiplyNumbers(fromInteger(4), multiplyNumbers(a.number, c.number)));
+  if (!square || !product) return null;
+  const { num, den } = divide(square, product);
+  const left = parametersText(new Map(scalePowers(b.powers, rational(2))));
+  return `${times(num, left)} < ${times(den, parametersText(new Map(multiplyPowers(a.powers, c.powers))))}`;
 }
 
 /**
@@ -114,11 +116,12 @@ function copositive(a: readonly Summand[], b: readonly Summand[], c: readonly Su
   if (a.length + b.length + c.length > 3) return undecided('its mixed term is negative and a coefficient is a sum.');
   const [x, y, z] = [a[0]!, b[0]!, c[0]!];
   const d = discriminant(x, y, z);
-  if (d === null)
-    return {
-      answer: 'condition',
-      text: `Bounded from below if (${sizeText(y)})^2 < 4 (${sizeText(x)}) (${sizeText(z)}). ${ASSUMED}`,
-    };
+  if (d === null) {
+    const condition = conditionText(x, y, z);
+    return condition === null
+      ? undecided('its mixed term is negative.')
+      : { answer: 'condition', text: `Bounded from below if ${condition}. ${ASSUMED}` };
+  }
   if (sign(d) > 0) return { answer: 'unbounded', text: `Unbounded from below: the mixed term wins. ${ASSUMED}` };
   return sign(d) < 0
     ? { answer: 'bounded', text: `Bounded from below. ${ASSUMED}` }
