@@ -3,7 +3,6 @@ import { type ErrorObject, errorObject } from '#contract/errors.ts';
 import { expansionRequestSchema } from '#contract/request.ts';
 import type { DiagramDTO, LedgerDTO, RulesDTO, Summary } from '#contract/result.ts';
 import { validate } from '#contract/validate.ts';
-import { couplingsLatex, grouped, type Question, requestOf } from '#features/home/question.ts';
 import {
   describeDiagram,
   drawingOf,
@@ -15,6 +14,7 @@ import {
   renderSummary,
   runExpansion,
 } from '#engine/index.ts';
+import { couplingsLatex, grouped, type Question, requestOf } from '#features/home/question.ts';
 import { errorOf, isAnswer } from '#server/refusal.ts';
 import { runtime } from '#server/runtime.ts';
 import type { Viewer } from '#server/viewer.ts';

@@ -8,8 +8,8 @@ import { type Draft, draftOf, EMPTY, inputOf } from '#features/model/draft.ts';
 import { exampleById } from '#features/model/examples.ts';
 import { expandAddress } from '#features/model/expand.ts';
 import { draftFromForm } from '#features/model/form.ts';
-import { previewModel } from '#server/preview.ts';
 import { createModel, updateModel } from '#server/models.ts';
+import { previewModel } from '#server/preview.ts';
 import { errorOf, isAnswer } from '#server/refusal.ts';
 
 /** What the editor page shows, or where it goes. */
