@@ -1,8 +1,8 @@
 import type { CountedDiagram } from '../graph/diagram.ts';
 import type { Content, Theory } from '../graph/theory.ts';
 import { Emitter } from './search/emit.ts';
-import { type Components, newFrame } from './search/frame.ts';
-import { RowSearch } from './search/rows.ts';
+import { newFrame } from './search/frame.ts';
+import { RowSearch, type SearchOptions } from './search/rows.ts';
 
 /** Whether all half-lines can be contracted at all, and, if asked, with enough lines to hang together. O(kinds · types). */
 function contractible(
@@ -24,13 +24,14 @@ function contractible(
  * group; as a stream in an order that depends on the arguments only. Memory is that of one diagram.
  *
  * `components`: any; noVacuum, every component has an external point; connected, one component in all. The empty diagram has
- * none: it is admitted by the first two. `stop` is asked now and then, also while nothing is found; when it says yes the stream ends.
+ * none: it is admitted by the first two. `noBridges` leaves out diagrams in which an internal line is a bridge. `stop` is asked
+ * now and then, also while nothing is found; when it says yes the stream ends.
  */
 export function* enumerateContent(
   theory: Theory,
   legs: readonly number[],
   content: Content,
-  options: { components: Components; stop?: () => boolean },
+  options: SearchOptions,
 ): Generator<CountedDiagram> {
   if (!contractible(theory, legs, content, options.components === 'connected')) return;
   const frame = newFrame(theory, legs, content);
@@ -38,7 +39,7 @@ export function* enumerateContent(
     if (options.components !== 'connected') yield { kinds: [], legs: [], lines: [], symmetryFactor: 1n };
     return;
   }
-  const search = new RowSearch(frame, options.components, options.stop);
+  const search = new RowSearch(frame, options);
   const emitter = new Emitter(frame, theory, frame.used);
   while (search.next()) yield emitter.diagram(search.canonicity.orbitSizes, search.changed);
 }

@@ -31,7 +31,8 @@ export function* expandContent(
   stop?: () => boolean,
 ): Generator<ExpandedDiagram> {
   const components = COMPONENTS[request.keep];
-  const options = stop ? { components, stop } : { components };
+  const noBridges = request.keep === '1PI';
+  const options = stop ? { components, noBridges, stop } : { components, noBridges };
   for (const diagram of enumerateContent(request.theory, request.legs, content, options)) {
     const found = facts(diagram);
     if (!passesKeep(found, request.keep) || !passesDrop(found, request.drop)) continue;

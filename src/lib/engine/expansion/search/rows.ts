@@ -1,6 +1,16 @@
+import { BridgeTest } from './bridges.ts';
 import { Canonicity } from './canonicity.ts';
 import { ComponentTest } from './components.ts';
 import type { Components, Frame } from './frame.ts';
+
+/** What the search leaves out, and when it ends early. */
+export interface SearchOptions {
+  readonly components: Components;
+  /** Leaves out diagrams with an internal line that is a bridge. */
+  readonly noBridges?: boolean;
+  /** Asked now and then, also while nothing is found. */
+  readonly stop?: () => boolean;
+}
 
 /** Steps between two questions whether to stop. */
 const STEPS_BETWEEN = 4096;
@@ -18,6 +28,7 @@ const STEPS_BETWEEN = 4096;
 export class RowSearch {
   readonly canonicity: Canonicity;
   private readonly component: ComponentTest;
+  private readonly bridge: BridgeTest | null;
   /** Half-lines left at each node: packed by type, and their number. */
   private readonly left: Int32Array;
   private readonly open: Int32Array;
@@ -29,17 +40,21 @@ export class RowSearch {
   private readonly oneType: boolean;
   /** The first row that differs from the matrix before. */
   changed = 0;
+  private readonly stop: (() => boolean) | undefined;
   private started = false;
   private steps = 0;
 
   constructor(
     private readonly frame: Frame,
-    components: Components,
-    private readonly stop: (() => boolean) | undefined,
+    options: SearchOptions,
   ) {
     const { n, table } = frame;
     this.canonicity = new Canonicity(frame);
-    this.component = new ComponentTest(frame, components);
+    this.component = new ComponentTest(frame, options.components);
+    // Each side of a bridge has an odd number of half-lines, so some node has: an external point or a vertex.
+    const bridges = table.degree.some((degree) => degree % 2 === 1);
+    this.bridge = options.noBridges && bridges ? new BridgeTest(frame) : null;
+    this.stop = options.stop;
     this.left = table.halfLines.slice();
     this.open = table.degree.slice();
     this.after = new Int32Array((n + 1) * (n + 1));
@@ -183,6 +198,7 @@ export class RowSearch {
   private finish(row: number): number {
     const { n } = this.frame;
     if (!this.component.admits(row, this.open)) return row;
+    if (this.bridge && !this.bridge.admits(row, this.open)) return row;
     if (!this.canonicity.enter(row)) return this.canonicity.restsOn;
     if (row + 1 === n) return this.canonicity.isCanonical() ? n : this.canonicity.restsOn;
     this.split(row);
