@@ -72,6 +72,8 @@ describe('composing', () => {
     await page.locator('#order-error').waitFor();
     await page.getByRole('button', { name: 'Number of loops: one more' }).click();
     await page.locator('#order-error').waitFor({ state: 'detached' });
+    await legs.press('Enter');
+    await page.waitForURL(MADE);
   });
 
   it('refuses an infinite order at the order', async () => {

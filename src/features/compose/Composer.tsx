@@ -108,9 +108,6 @@ function Form({
               {alive ? spoken : ''}
             </span>
             <div className="row">
-              <button type="submit" name="intent" value="estimate" className="btn only-scriptless">
-                Count first
-              </button>
               <button
                 type="submit"
                 name="intent"
@@ -119,6 +116,10 @@ function Form({
                 aria-disabled={blocked || (alive && !readable) || undefined}
               >
                 {sending ? 'Expanding …' : 'Expand'}
+              </button>
+              {/* After the other one: Enter in a field presses the first button of a form, seen or not. */}
+              <button type="submit" name="intent" value="estimate" className="btn only-scriptless">
+                Count first
               </button>
             </div>
           </div>
