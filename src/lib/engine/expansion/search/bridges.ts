@@ -7,6 +7,7 @@ import type { Frame } from './frame.ts';
  * @see R. E. Tarjan, Inf. Process. Lett. 2 (1974) 160 (bridges by depth-first numbers).
  */
 export class BridgeTest {
+  private readonly frame: Frame;
   private readonly number: Int32Array;
   private readonly mark: Int32Array;
   private stamp = 0;
@@ -20,7 +21,8 @@ export class BridgeTest {
   private readonly below: Int32Array;
   private bridges = 0;
 
-  constructor(private readonly frame: Frame) {
+  constructor(frame: Frame) {
+    this.frame = frame;
     const { n } = frame;
     this.number = new Int32Array(n);
     this.mark = new Int32Array(n);

@@ -13,18 +13,19 @@ const PREFIX_BUDGET = 400;
  * the places before, the same row as the matrix has at d. A larger row refutes canonicity, a smaller one ends the branch.
  * Runs are permuted as sets, so no order within a run is tried before a row tells its members apart.
  *
- * Renumberings are sorted by the first place d that they change and the node v put there. The pairs (d, v) that are not
- * refuted are kept row by row, so a test looks only into what is still undecided.
- *
- * The group is counted along the chain of stabilisers of places 0, 1, 2, …, from its end: an orbit for each place, one
- * automorphism for each new member of an orbit, equivalent choices skipped.
+ * Most matrices leave few renumberings undecided: a frontier carries these from row to row. Where there are too many, the
+ * matrix is very symmetric, and they are sorted by the first place d that they change and the node v put there: unfinished
+ * rows are searched from the undecided pairs (d, v) within a budget; for the finished matrix the group is counted along the
+ * chain of stabilisers of places 0, 1, 2, …, from its end: an orbit for each place, one automorphism for each new member of an
+ * orbit, choices equivalent to one that failed skipped.
  *
  * @see R. C. Read, Ann. Discrete Math. 2 (1978) 107; M. Meringer, J. Graph Theory 30 (1999) 137.
  */
 export class Canonicity {
+  private readonly frame: Frame;
   /** After a refutation: the last row that it rests on. No change to later rows can undo it. */
   restsOn = 0;
-  /** Sizes of the orbits of the last successful count; their product is the group's order. */
+  /** Numbers whose product is the order of the group of the last canonical matrix: sizes of orbits. */
   readonly orbitSizes: Int32Array;
 
   private readonly order: Int32Array;
@@ -41,7 +42,8 @@ export class Canonicity {
   private readonly failed: Int32Array;
   private visits = 0;
 
-  constructor(private readonly frame: Frame) {
+  constructor(frame: Frame) {
+    this.frame = frame;
     const { n } = frame;
     this.order = new Int32Array((n + 1) * n);
     this.comparison = new Comparison(frame);
@@ -50,7 +52,7 @@ export class Canonicity {
     this.image = Int32Array.from({ length: n }, (_, v) => v);
     this.orbits = new Orbits(n);
     this.failed = new Int32Array(n);
-    this.pairs = new Int32Array((n * n * (n + 1)) / 2);
+    this.pairs = new Int32Array(((n - 1) * n * (n + 1)) / 6);
     this.live = new Int32Array(n);
     this.orbitSizes = new Int32Array(n);
   }
@@ -122,9 +124,9 @@ export class Canonicity {
     return true;
   }
 
-  /** Pairs of rows 0…r−1 come first: row r has at most (r + 1)·n of them. */
+  /** After row r there are at most r(r + 1)/2 pairs; those of earlier rows come first. */
   private segment(r: number): number {
-    return (this.frame.n * r * (r + 1)) / 2;
+    return ((r - 1) * r * (r + 1)) / 6;
   }
 
   /** Verdict on all renumberings that change no place before d and put node v, whose row is equal, at d. */

@@ -11,9 +11,11 @@ export const UNKNOWN = 3;
  * other nodes stand in runs, one for each run of columns, and a run is sorted when a row is read: larger joins first.
  */
 export class Comparison {
+  private readonly frame: Frame;
   private readonly values: Int32Array;
 
-  constructor(private readonly frame: Frame) {
+  constructor(frame: Frame) {
+    this.frame = frame;
     this.values = new Int32Array(frame.n);
   }
 

@@ -8,6 +8,8 @@ import type { Components, Frame } from './frame.ts';
  * half-lines decides; otherwise the component of the last row is walked through.
  */
 export class ComponentTest {
+  private readonly frame: Frame;
+  private readonly components: Components;
   /** whole[r]: after row r the touched nodes are one component. */
   private readonly whole: Uint8Array;
   /** seen[v] === stamp: met in this walk. */
@@ -15,10 +17,9 @@ export class ComponentTest {
   private readonly stack: Int32Array;
   private stamp = 0;
 
-  constructor(
-    private readonly frame: Frame,
-    private readonly components: Components,
-  ) {
+  constructor(frame: Frame, components: Components) {
+    this.frame = frame;
+    this.components = components;
     this.whole = new Uint8Array(frame.n);
     this.seen = new Int32Array(frame.n);
     this.stack = new Int32Array(frame.n);

@@ -16,6 +16,7 @@ interface Bundle {
 
 /** Turns finished matrices into diagrams with |Aut| = |vertex automorphisms| · ∏ m! · ∏ l! 2^l. */
 export class Emitter {
+  private readonly frame: Frame;
   private readonly between: readonly Bundle[];
   private readonly own: readonly Bundle[];
   /** Lines are values: one object for each (from, to, type) that occurs. */
@@ -28,11 +29,8 @@ export class Emitter {
   private readonly large: bigint[];
 
   /** used: the type of the theory behind each type of the frame's table. */
-  constructor(
-    private readonly frame: Frame,
-    theory: Theory,
-    used: readonly number[],
-  ) {
+  constructor(frame: Frame, theory: Theory, used: readonly number[]) {
+    this.frame = frame;
     const bundle = (counts: readonly number[], own: boolean) => bundleOf(counts, own, used, theory);
     this.between = frame.table.counts.map((counts) => bundle(counts, false));
     this.own = frame.table.selfCounts.map((counts) => bundle(counts, true));

@@ -12,6 +12,8 @@ const CAPACITY = 96;
  * belongs to earlier rows, so going back to a row needs no undoing.
  */
 export class Frontier {
+  private readonly frame: Frame;
+  private readonly comparison: Comparison;
   /** After the last row: the order of the automorphism group. */
   automorphisms = 1;
   private readonly orders: Int32Array;
@@ -25,10 +27,9 @@ export class Frontier {
   private kept = 0;
   private row = 0;
 
-  constructor(
-    private readonly frame: Frame,
-    private readonly comparison: Comparison,
-  ) {
+  constructor(frame: Frame, comparison: Comparison) {
+    this.frame = frame;
+    this.comparison = comparison;
     const { n } = frame;
     this.orders = new Int32Array(CAPACITY * n);
     this.depth = new Int32Array(CAPACITY);

@@ -6,12 +6,14 @@ export interface Equivalence {
 
 /** Automorphisms found so far, and the orbits they make. */
 export class Orbits {
+  private readonly n: number;
   /** found[0…count−1]; the arrays are used again. */
   private readonly found: Int32Array[] = [];
   private count = 0;
   private readonly parent: Int32Array;
 
-  constructor(private readonly n: number) {
+  constructor(n: number) {
+    this.n = n;
     this.parent = new Int32Array(n);
   }
 

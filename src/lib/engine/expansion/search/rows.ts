@@ -13,7 +13,7 @@ export interface SearchOptions {
 }
 
 /** Steps between two questions whether to stop. */
-const STEPS_BETWEEN = 4096;
+const STEPS_BETWEEN = 256;
 
 /**
  * Orderly generation: fills the matrix of a frame row by row, larger joins first, so that it visits exactly the canonical
@@ -26,6 +26,7 @@ const STEPS_BETWEEN = 4096;
  * J. Graph Theory 30 (1999) 137.
  */
 export class RowSearch {
+  private readonly frame: Frame;
   readonly canonicity: Canonicity;
   private readonly component: ComponentTest;
   private readonly bridge: BridgeTest | null;
@@ -44,10 +45,8 @@ export class RowSearch {
   private started = false;
   private steps = 0;
 
-  constructor(
-    private readonly frame: Frame,
-    options: SearchOptions,
-  ) {
+  constructor(frame: Frame, options: SearchOptions) {
+    this.frame = frame;
     const { n, table } = frame;
     this.canonicity = new Canonicity(frame);
     this.component = new ComponentTest(frame, options.components);
