@@ -129,6 +129,11 @@ describe('notes on how a text was read', () => {
     ['1/2 (d phi)^2 + k d^2 phi', 'total-derivative'],
     ['(d phi^*)(d phi) - y phi^3 - conj(y) conj(phi)^3', 'complex-parameter'],
     ['1/2 (d phi)^2 - m^2 phi*phi', 'star'],
+    ['1/2 (d phi)^2 - V(phi)', 'call'],
+    ['1/2 (d phi(x))^2 - g phi^3', 'call'],
+    ['1/2 (d phi)^2 - g phi(x)^3', 'call'],
+    ['1/2 (d phi)^2 - 1/2 \\delta m^2 phi^2', 'delta'],
+    ['1/2 (d phi)^2 - lamda/4! phi^4', 'spelling'],
     ['1/2 (d phi)^2 + 1/2 (d h)^2 - m^2 phi* h', 'star'],
   ])('%s: %s', (text, code) => {
     expect(modelOf(text).notes.map((note) => note.code)).toContain(code);

@@ -45,7 +45,9 @@ describe('the normal form looks as on paper', () => {
     ['1/2 (d x)^2 - 3 g^2 x^4/8', '1/2 (d x)^2 - 3 g^2/8 x^4'],
     ['1/2 (d x)^2 - g x^3', '1/2 (d x)^2 - g x^3'],
     ['1/2 (d x)^2 - (1 + sqrt(2)) g x^3', '1/2 (d x)^2 + (-1 - sqrt(2)) g x^3'],
-    ['1/2 (d x)^2 - x^2 (d x)^2/f^2', '1/2 (d x)^2 - f^-2 x^2 (d x)^2'],
+    ['1/2 (d x)^2 - x^2 (d x)^2/f^2', '1/2 (d x)^2 - 1/f^2 x^2 (d x)^2'],
+    ['1/2 (d h)^2 - m^2/(2 v) h^3 - m^2/8/v^2 h^4', '1/2 (d h)^2 - m^2/(2 v) h^3 - m^2/(8 v^2) h^4'],
+    ['1/2 (d x)^2 - c x^4/(4! f g^2)', '1/2 (d x)^2 - c/(4! f*g^2) x^4'],
     ['1/2 (d x)^2 - c x^2 d^2 x', '1/2 (d x)^2 - c x^2 d^2 x'],
   ])('%s', (typed, printed) => {
     expect(modelText(modelOf(typed))).toBe(printed);

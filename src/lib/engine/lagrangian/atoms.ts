@@ -74,8 +74,15 @@ function refusePower(parser: Parser, start: number, end: number): never {
 
 const opensBrace = (token: Token): boolean => token.kind === 'mark' && token.mark === '{';
 
+function refuseReserved(parser: Parser): void {
+  const { token } = parser;
+  if (token.kind === 'pi') throw parser.fault('"pi" is the number π; a field needs another name, such as pi_0.');
+  if (token.kind === 'imaginary') throw parser.fault('This is the imaginary unit; a field needs another name.');
+}
+
 /** The operand of ∂: one name, its conjugate, a bracketed expression, or another derivative. No power: ∂φ² is ambiguous. */
 function readOperand(parser: Parser, start: number): Node {
+  refuseReserved(parser);
   let node = readAtom(parser);
   for (;;) {
     const raised = parser.at('^');
@@ -95,6 +102,17 @@ function readOperand(parser: Parser, start: number): Node {
 
 const isConjugateMark = (token: Token): boolean => token.kind === 'mark' && (token.mark === '*' || token.mark === '†');
 
+/** Takes the second half of an operator ∂_μ∂^μ that waits for its operand; leaves the cursor alone where there is none. */
+function closesBox(parser: Parser, index: string): boolean {
+  const { token } = parser;
+  if (token.kind !== 'derivative') return false;
+  parser.take();
+  const partner = token.index ?? readIndex(parser);
+  if (partner === index && !startsOperand(parser)) return true;
+  parser.back(token);
+  return false;
+}
+
 function readDerivative(parser: Parser): Node {
   const token = parser.take();
   const { start } = token;
@@ -107,6 +125,7 @@ function readDerivative(parser: Parser): Node {
   } else if (parser.at('^') || parser.token.kind === 'superscript')
     throw parser.fault('A derivative with an index takes no power; write the second one out.', parser.token);
   const { end } = parser.previous!;
+  if (index !== null && closesBox(parser, index)) return { is: 'operator', count: 1, start, end: parser.previous!.end };
   if (startsOperand(parser) && parser.token.kind !== 'number') {
     const node = parser.nested(token, () => readOperand(parser, start));
     return { is: 'derivative', index, count, node, start, end: node.end };

@@ -24,7 +24,7 @@ const WITH_ARGUMENT = words('label tag begin end hspace vspace hphantom phantom'
 const SPELLINGS = words('mathrm mathit mathcal mathscr mathsf text textrm textit operatorname mbox hbox');
 const FUNCTIONS = words('sin cos tan cot sinh cosh tanh exp log ln det lim');
 const MULTIPLETS = words('vec boldsymbol mathbf bm textbf');
-const DECORATIONS = words('tilde hat dot ddot check breve acute grave widetilde widehat prime');
+const DECORATIONS = words('tilde hat check breve acute grave widetilde widehat prime');
 
 const FIXED: ReadonlyMap<string, Meaning> = new Map<string, Meaning>([
   ...SKIPPED.map((c): [string, Meaning] => [c, { is: 'skip' }]),
@@ -49,7 +49,7 @@ const FIXED: ReadonlyMap<string, Meaning> = new Map<string, Meaning>([
   ...words('Box square').map((c): [string, Meaning] => [c, { is: 'word', kind: 'box' }]),
   ['sqrt', { is: 'word', kind: 'sqrt' }],
   ...words('bar overline').map((c): [string, Meaning] => [c, { is: 'word', kind: 'conj' }]),
-  ...words('frac tfrac dfrac cfrac').map((c): [string, Meaning] => [c, { is: 'word', kind: 'frac' }]),
+  ...words('frac tfrac dfrac cfrac nicefrac sfrac').map((c): [string, Meaning] => [c, { is: 'word', kind: 'frac' }]),
   ['over', { is: 'word', kind: 'over' }],
   ...FUNCTIONS.map((c): [string, Meaning] => [
     c,
@@ -77,6 +77,10 @@ const FIXED: ReadonlyMap<string, Meaning> = new Map<string, Meaning>([
   ...words('slashed not').map((c): [string, Meaning] => [
     c,
     { is: 'refused', message: `\\${c} belongs to fermions, which are out of scope: only scalar fields are read.` },
+  ]),
+  ...words('dot ddot').map((c): [string, Meaning] => [
+    c,
+    { is: 'refused', message: `\\${c} is not read: write a derivative as d phi or \\partial\\phi.` },
   ]),
   ['nabla', { is: 'refused', message: 'Write derivatives as \\partial_\\mu … \\partial^\\mu; ∇ is not read.' }],
   ['pm', { is: 'refused', message: 'A sign must be + or −, not ±.' }],

@@ -76,8 +76,10 @@ export class Cursor {
     const c = this.peek();
     if (c === '{') return this.spelling('A subscript');
     let body = '';
-    if (c === '\\') body = this.spelledCommand();
-    else if (greekName(c) !== null) {
+    if (c === '\\') {
+      body = this.spelledCommand();
+      if (body === '') return this.subscriptBody();
+    } else if (greekName(c) !== null) {
       body = greekName(c)!;
       this.advance();
     } else if (isDigit(c)) body = this.digits();

@@ -6,6 +6,7 @@ import { BOUNDS } from './bounds.ts';
 import { startsOperand } from './groups.ts';
 import type { Span } from './model.ts';
 import { readPostfix } from './postfix.ts';
+import { afterPrefix, withoutTrailing } from './prefix.ts';
 import { scan } from './scanner.ts';
 import { Source } from './source.ts';
 import { describe, type Token } from './tokens.ts';
@@ -194,32 +195,6 @@ export class Parser {
     const atom = readAtom(this);
     return readPostfix(this, atom);
   }
-}
-
-/** Position after a prefix "L =", "\mathcal{L}_{int} :=" …; 0 where there is none. */
-function afterPrefix(source: Source, tokens: readonly Token[]): number {
-  const equals = tokens.findIndex((token) => token.kind === 'mark' && token.mark === '=');
-  if (equals < 0) return 0;
-  const [first] = tokens;
-  const span = tokens[equals]!;
-  if (equals !== 1 || first!.kind !== 'name')
-    throw source.fault('syntax', 'An equals sign may stand only after a name at the start, as in "L = …".', span);
-  if (/^(L|Lagrangian)(_|$)/.test(first!.name)) return 2;
-  const message = /^[VU](_|$)/.test(first!.name)
-    ? 'A potential enters the Lagrangian with a minus sign: write "L = … − V" with V spelt out.'
-    : `"${first!.name} = …" is not a Lagrangian; write "L = …".`;
-  throw source.fault('syntax', message, { start: first!.start, end: span.end });
-}
-
-/** Drops punctuation that ends the formula. */
-function withoutTrailing(tokens: readonly Token[]): Token[] {
-  let length = tokens.length - 1;
-  while (length > 0) {
-    const last = tokens[length - 1]!;
-    if (last.kind !== 'mark' || !['.', ',', ';'].includes(last.mark)) break;
-    length--;
-  }
-  return [...tokens.slice(0, length), tokens.at(-1)!];
 }
 
 function unexpected(parser: Parser): InputError {

@@ -1,6 +1,7 @@
 import { factorial } from '../exact/combinatorics.ts';
 import { type ExactNumber, fromInteger, rationalValue } from '../exact/number.ts';
 import { latexNumber, typedNumber } from '../exact/numberText.ts';
+import { negate } from '../exact/rational.ts';
 import { parametersLatex, parametersText } from './kinds.ts';
 import type { CoefficientTerm, FieldFactor, Model, Monomial, Term } from './model.ts';
 import { nameLatex } from './symbols.ts';
@@ -111,15 +112,34 @@ function paperFactorials({ factors, derivatives }: Term, style: Style): string |
   return pieces.length === 1 || style === LATEX ? pieces.join(style.product) : `(${pieces.join(style.product)})`;
 }
 
-/** Numerator and denominator of a coefficient that is a rational times parameters; null where it is written as a number in front. */
-function fraction(term: Term, style: Style): { above: ExactNumber; below: string } | null {
+/** A coefficient in pieces: a number, the parameters beside it, and what stands below the line. */
+interface Coefficient {
+  readonly number: ExactNumber;
+  readonly parameters: Monomial;
+  readonly below: string | null;
+}
+
+/** What stands below the line: factorials or a whole number, then parameters with negative whole powers; null for nothing. */
+function belowText(number: string | null, parameters: Monomial, style: Style): string | null {
+  const inverse = new Map([...parameters].map(([name, power]) => [name, negate(power)]));
+  const pieces = [...(number === null ? [] : [number]), ...(inverse.size === 0 ? [] : [style.parameters(inverse)])];
+  if (pieces.length === 0) return null;
+  const joined = pieces.join(style.product);
+  return style === TEXT && (pieces.length > 1 || inverse.size > 1) ? `(${joined})` : joined;
+}
+
+/** The coefficient of a term as on paper: of a vertex with a rational number, one fraction; otherwise a number in front. */
+function fraction(term: Term, style: Style): Coefficient {
   const value = rationalValue(term.number);
-  if (!value || term.parameters.size === 0 || term.factors.length < 3) return null;
+  if (!value || term.parameters.size === 0 || term.factors.length < 3)
+    return { number: term.number, parameters: term.parameters, below: null };
   const factorials = paperFactorials(term, style);
-  const size = value.num < 0n ? -value.num : value.num;
-  if (factorials !== null && size === 1n && value.den === exchanges(term.factors))
-    return { above: fromInteger(value.num), below: factorials };
-  return value.den === 1n ? null : { above: fromInteger(value.num), below: `${value.den}` };
+  const isPaper =
+    factorials !== null && (value.num === 1n || value.num === -1n) && value.den === exchanges(term.factors);
+  const under = new Map([...term.parameters].filter(([, power]) => power.num < 0n && power.den === 1n));
+  const over = new Map([...term.parameters].filter(([name]) => !under.has(name)));
+  const below = belowText(isPaper ? factorials : value.den === 1n ? null : `${value.den}`, under, style);
+  return { number: fromInteger(value.num), parameters: over, below };
 }
 
 /** A number times parameters over what stands below the line. */
@@ -133,8 +153,8 @@ function coefficientOf(number: ExactNumber, parameters: Monomial, below: string 
 }
 
 function written(term: Term, style: Style): { minus: boolean; text: string } {
-  const { above, below } = fraction(term, style) ?? { above: term.number, below: null };
-  const { minus, text } = coefficientOf(above, term.parameters, below, style);
+  const { number, parameters, below } = fraction(term, style);
+  const { minus, text } = coefficientOf(number, parameters, below, style);
   const fields = fieldsOf(term, style);
   return { minus, text: text === '1' ? fields : `${text} ${fields}` };
 }

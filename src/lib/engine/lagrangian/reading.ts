@@ -12,7 +12,7 @@ const LORENTZ_RUN = new RegExp(`^(${[...LORENTZ].join('|')})(_?(${[...LORENTZ].j
 /** Names of fields that are vectors or tensors by their index: A_mu, F_munu, D_mu. */
 function isVectorName(name: string): boolean {
   const [base, ...rest] = name.split('_');
-  return /^[ABDFGVWZ]$/.test(base!) && rest.length > 0 && LORENTZ_RUN.test(rest.join('_'));
+  return /^[ABDFGVWZ]$/.test(base!) && /mu|nu/.test(rest.join('_')) && LORENTZ_RUN.test(rest.join('_'));
 }
 
 /** Refuses gauge fields, fermions and multiplets by what their names say. @throws InputError unsupported. */
@@ -116,6 +116,42 @@ function starNotes(source: Source, node: Node, fields: ReadonlySet<string>): Not
   return notes;
 }
 
+/** "V(phi)", "phi(x)": a name before the bracket of one name, where a reader may have meant a function. */
+function callNotes(source: Source, node: Node): Note[] {
+  const notes: Note[] = [];
+  walk(node, (inner) => {
+    if (inner.is !== 'product') return;
+    inner.factors.forEach((factor, k) => {
+      const left = inner.factors[k - 1]?.node;
+      const before = left?.is === 'derivative' ? left.node : left;
+      const group = stripped(factor.node);
+      const argument = group.is === 'group' && group.open === '(' ? group.node : null;
+      if (before?.is !== 'name' || before.end !== group.start || argument?.is !== 'name') return;
+      const span: Span = { start: before.start, end: factor.node.end };
+      const message = `"${source.quote(span)}" was read as a product, not as a function.`;
+      notes.push({ code: 'call', message, span });
+    });
+  });
+  return notes;
+}
+
+/** "δm": a delta before another parameter, where a reader may have meant one symbol. */
+function deltaNotes(source: Source, node: Node, fields: ReadonlySet<string>): Note[] {
+  const notes: Note[] = [];
+  walk(node, (inner) => {
+    if (inner.is !== 'product') return;
+    inner.factors.forEach((factor, k) => {
+      const before = inner.factors[k - 1]?.node;
+      const base = stripped(factor.node);
+      if (before?.is !== 'name' || before.name !== 'delta' || base.is !== 'name' || fields.has(base.name)) return;
+      const span: Span = { start: before.start, end: base.end };
+      const message = `"${source.quote(span)}" was read as the product of delta and ${base.name}; one symbol is written delta_${base.name}.`;
+      notes.push({ code: 'delta', message, span });
+    });
+  });
+  return notes;
+}
+
 /** A name that is made of other names of the text: "lambdaphi". */
 function gluedNotes(usage: Usage, fields: ReadonlySet<string>): Note[] {
   const known = [...new Set([...GREEK, ...usage.first.keys()])];
@@ -163,6 +199,8 @@ export function readingNotes(
   return [
     ...nodes.flatMap((node) => divisionNotes(source, node, fields)),
     ...nodes.flatMap((node) => starNotes(source, node, fields)),
+    ...nodes.flatMap((node) => callNotes(source, node)),
+    ...nodes.flatMap((node) => deltaNotes(source, node, fields)),
     ...gluedNotes(usage, fields),
     ...similarNotes(usage),
     ...indexNotes(usage, fields),

@@ -4,6 +4,7 @@ import { BOUNDS } from './bounds.ts';
 import { ENVIRONMENTS, knownCommands, type Meaning, meaningOf } from './commands.ts';
 import { Cursor, isDigit, isLetter } from './cursor.ts';
 import { FractionArguments } from './fractionArguments.ts';
+import { readLateSubscript } from './lateSubscript.ts';
 import { nearest } from './nearest.ts';
 import { readNumeral, readRaised } from './numerals.ts';
 import type { Source } from './source.ts';
@@ -35,6 +36,7 @@ export function scan(source: Source): Token[] {
   const fractions = new FractionArguments();
   let gap = false;
   while (cursor.at < length) {
+    if (readLateSubscript(cursor, tokens)) continue;
     const start = cursor.at;
     const last = tokens.at(-1);
     const word = readWord(cursor, last?.kind === 'mark' && last.mark === '^', fractions.takesOneLetter);
@@ -62,6 +64,7 @@ function readWord(cursor: Cursor, afterCaret: boolean, oneLetter: boolean): Word
   const c = cursor.peek();
   if (c === '%') return skipComment(cursor);
   if (isDigit(c) || (c === '.' && isDigit(cursor.peek(start + 1)))) return { kind: 'number', ...readNumeral(cursor) };
+  if (afterCaret && daggerWord(cursor)) return { kind: 'mark', mark: '†' };
   if (isLetter(c)) return hermitianConjugate(cursor) ? { kind: 'hc' } : identifier(cursor, oneLetter);
   if (c === '\\') return command(cursor);
   cursor.advance();
@@ -82,6 +85,7 @@ const REFUSED_SYMBOLS: ReadonlyMap<string, string> = new Map([
   ["'", 'A prime is not part of a name; use a subscript instead.'],
   ['′', 'A prime is not part of a name; use a subscript instead.'],
   ['…', 'Dots leave terms unsaid; write every term.'],
+  ['∇', 'Write derivatives as d or ∂; ∇ is not read.'],
   ['±', 'A sign must be + or −, not ±.'],
   ['_', 'A subscript must follow a name.'],
 ]);
@@ -95,6 +99,7 @@ function symbol(cursor: Cursor, c: string, start: number, afterCaret: boolean): 
     return { kind: 'mark', mark: '**' };
   }
   if (mark !== undefined) return { kind: 'mark', mark };
+  if (c === ':' && cursor.peek() === '=') return null;
   if (c === '∂') return { kind: 'derivative', index: cursor.subscript() };
   if (c === '□' || c === '◻') return { kind: 'box' };
   if (c === '√') return { kind: 'sqrt' };
@@ -107,6 +112,13 @@ function symbol(cursor: Cursor, c: string, start: number, afterCaret: boolean): 
 /** "h.c." or "c.c." at the cursor, in any case and with or without the last point. */
 function hermitianConjugate(cursor: Cursor): boolean {
   const match = /^[hc]\.\s?c\b\.?/i.exec(cursor.text.slice(cursor.at, cursor.at + 6));
+  if (match) cursor.at += match[0].length;
+  return match !== null;
+}
+
+/** "phi^dagger" in plain text. */
+function daggerWord(cursor: Cursor): boolean {
+  const match = /^(dagger|dag)(?![A-Za-z0-9])/.exec(cursor.text.slice(cursor.at, cursor.at + 7));
   if (match) cursor.at += match[0].length;
   return match !== null;
 }
@@ -175,7 +187,7 @@ function meant(cursor: Cursor, meaning: Meaning, name: string, start: number): W
     case 'word':
       return meaning.kind === 'derivative' ? { kind: 'derivative', index: cursor.subscript() } : { kind: meaning.kind };
     case 'skip':
-      return null;
+      return name === '\\' ? skipLineBreak(cursor) : null;
     case 'skip-argument':
       return skipArgument(cursor, name, start);
     case 'spelling':
@@ -183,6 +195,13 @@ function meant(cursor: Cursor, meaning: Meaning, name: string, start: number): W
     case 'refused':
       throw cursor.fault('unsupported', meaning.message, start);
   }
+}
+
+/** The space after a line break: \\[4pt]. */
+function skipLineBreak(cursor: Cursor): null {
+  const match = /^\s*\[\s*-?[\d.]+\s*(pt|em|ex|mm|cm|in)\s*\]/.exec(cursor.text.slice(cursor.at, cursor.at + 24));
+  if (match) cursor.at += match[0].length;
+  return null;
 }
 
 /** \mathrm{dm}, \text{h.c.}, \mathcal L. */
