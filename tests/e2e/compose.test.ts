@@ -30,7 +30,7 @@ describe('composing', () => {
     }
     expect(await page.getByLabel('Field operators, in order').inputValue()).toBe('h h s s');
     // ⟨h h s s⟩ at one loop, 1PI: λρ and ρσ in the s-channel, ρ² in t and u (counted by hand).
-    await page.getByText('4 diagrams', { exact: true }).waitFor();
+    await page.locator('.expected-count', { hasText: /^4 diagrams$/ }).waitFor();
     await page.getByRole('button', { name: 'Expand' }).focus();
     await page.keyboard.press('Enter');
     await page.waitForURL(MADE);
@@ -50,7 +50,7 @@ describe('composing', () => {
     await page.keyboard.press('Delete');
     expect(await text.inputValue()).toBe('h h s');
     await page.keyboard.press('ArrowLeft');
-    expect(await page.evaluate(() => document.activeElement?.getAttribute('aria-label'))).toBe('Leg 2, h');
+    await page.waitForFunction(() => document.activeElement?.getAttribute('aria-label') === 'Leg 2, h');
     await page.getByText('Every vertex holds an even number of s').waitFor();
     await page.waitForFunction(() => new URL(location.href).searchParams.get('legs') === 'h h s');
     await page.reload();
@@ -74,6 +74,17 @@ describe('composing', () => {
     await page.locator('#order-error').waitFor({ state: 'detached' });
     await legs.press('Enter');
     await page.waitForURL(MADE);
+  });
+
+  it('starts anew with another Lagrangian', async () => {
+    const page = await stage.open(typed('legs=h+h+s+s&by=powers&power:rho=2&keep=1PI'));
+    await alive(page);
+    await page.getByRole('link', { name: 'φ⁴', exact: true }).click();
+    await page.waitForFunction(() => document.querySelector<HTMLInputElement>('#legs')?.value === 'phi phi');
+    expect(await page.getByLabel('power of rho').count()).toBe(0);
+    await page.getByLabel('power of lambda').fill('2');
+    // ⟨φφ⟩ at λ², 1PI: the sunset and the double bubble on a line (common practice).
+    await page.locator('.expected-count', { hasText: /^2 diagrams$/ }).waitFor();
   });
 
   it('refuses an infinite order at the order', async () => {

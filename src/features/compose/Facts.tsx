@@ -10,12 +10,14 @@ interface Props {
   readonly input: ModelInput;
   readonly preview: ModelPreview;
   readonly signedIn: boolean;
+  /** Where signing up comes back to. */
+  readonly address: string;
 }
 
 const MOST_VERTICES = 12;
 
 /** What bears on the question: conventions, the vertices to count powers of, and what one may run. */
-export function Facts({ input: { conventions }, preview: { rules }, signedIn }: Props) {
+export function Facts({ input: { conventions }, preview: { rules }, signedIn, address }: Props) {
   const { classes, seconds } = signedIn ? LIMITS.member : LIMITS.visitor;
   const signature = signatures.find(({ value }) => value === conventions.signature);
   return (
@@ -61,8 +63,8 @@ export function Facts({ input: { conventions }, preview: { rules }, signedIn }: 
           {!signedIn && (
             <>
               {' '}
-              It is kept for {LIMITS.visitor.keepHours} hours; <a href="/signup?next=/expansions/new">sign up</a> for
-              more.
+              It is kept for {LIMITS.visitor.keepHours} hours;{' '}
+              <a href={`/signup?next=${encodeURIComponent(address)}`}>sign up</a> for more.
             </>
           )}
         </p>

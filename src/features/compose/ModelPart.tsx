@@ -45,12 +45,14 @@ export function Stored({ model, preview }: { readonly model: StoredModel; readon
 interface TypedProps {
   readonly draft: Draft;
   readonly edit: (part: Partial<Draft>) => void;
+  /** Takes another Lagrangian altogether. */
+  readonly replace: (draft: Draft) => void;
   readonly preview: ModelPreview;
   readonly alive: boolean;
 }
 
 /** A Lagrangian typed here, for a question without a stored model. */
-export function Typed({ draft, edit, preview, alive }: TypedProps) {
+export function Typed({ draft, edit, replace, preview, alive }: TypedProps) {
   const input = useRef<HTMLTextAreaElement>(null);
   const wrong = preview.error !== null && draft.lagrangian.trim() !== '';
   const place = preview.error ? offsetsOf(draft.lagrangian, preview.error) : null;
@@ -95,7 +97,7 @@ export function Typed({ draft, edit, preview, alive }: TypedProps) {
           <Formula html={preview.mathml} />
         </Scroll>
       )}
-      <Examples onChoose={({ input: chosen }) => edit(draftOf(chosen))} />
+      <Examples onChoose={({ input: chosen }) => replace(draftOf(chosen))} />
       <Overrides draft={draft} />
     </section>
   );

@@ -12,7 +12,7 @@ interface Props {
 
 /** The order: loops, powers of couplings one by one, or their total; exactly, or with every lower one. */
 export function Order({ ask, edit, parameters, error }: Props) {
-  const couplings = parameters.filter(({ role, weight }) => role !== 'propagator' && weight !== '0');
+  const couplings = couplingsOf(parameters, ask.powers);
   const described = error ? 'order-error' : undefined;
   return (
     <fieldset className="ask-part ask-order" id="part-order">
@@ -31,7 +31,7 @@ export function Order({ ask, edit, parameters, error }: Props) {
         {couplings.length === 0 && <p className="quiet">This model has no coupling.</p>}
         {couplings.map(({ name, mathml }) => (
           <label key={name} className="power">
-            <Formula html={mathml} />
+            {mathml === null ? <code className="bad">{name}</code> : <Formula html={mathml} />}
             <span className="sr-only">power of {name}</span>
             <input
               name={`power:${name}`}
@@ -71,6 +71,16 @@ export function Order({ ask, edit, parameters, error }: Props) {
       </label>
     </fieldset>
   );
+}
+
+/** The couplings that may bear a power, and names that bear one without being a coupling: those must be seen to be cleared. */
+function couplingsOf(parameters: ModelPreview['parameters'], powers: Ask['powers']) {
+  const known = parameters.filter(({ role, weight }) => role !== 'propagator' && weight !== '0');
+  const strangers = powers.filter(([name]) => known.every((coupling) => coupling.name !== name));
+  return [
+    ...known.map(({ name, mathml }) => ({ name, mathml })),
+    ...strangers.map(([name]) => ({ name, mathml: null })),
+  ];
 }
 
 interface NumeralProps {

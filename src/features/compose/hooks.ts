@@ -51,7 +51,7 @@ export function useEstimate(input: ModelInput, ask: Ask, first: Known & { readon
   };
 }
 
-/** Keeps the question in the address, so that reloading, going back and sending the link lose nothing. */
+/** Keeps the question in the address, so that reloading, going back and sending the link lose nothing. @returns it */
 export function useAddress(
   source: { readonly model: string; readonly revision: string } | null,
   input: ModelInput,
@@ -66,4 +66,5 @@ export function useAddress(
   useEffect(() => {
     if (address.length < LONGEST_ADDRESS) window.history.replaceState(window.history.state, '', address);
   }, [address]);
+  return address;
 }
