@@ -159,11 +159,13 @@ export function powerOfNumber(a: ExactNumber, n: number): ExactNumber {
   return result;
 }
 
-/** Decimal digits of the largest integer in the number: what the bounds on growth are counted in. */
+const SMALL = 10n ** 15n;
+
+/** Decimal digits of the largest integer in the number, at least 15: what the bounds on growth are counted in. */
 export function digitsOf(a: ExactNumber): number {
-  let digits = 0;
+  let digits = 15;
   for (const { re, im, root } of a.parts)
     for (const value of [re.num, re.den, im.num, im.den, root])
-      digits = Math.max(digits, value.toString(16).length * 1.21);
+      if (value >= SMALL || value <= -SMALL) digits = Math.max(digits, value.toString(16).length * 1.21);
   return Math.ceil(digits);
 }

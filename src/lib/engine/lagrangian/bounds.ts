@@ -26,7 +26,7 @@ export const BOUNDS = {
   /** Monomials of one power of a sum, counted by the multinomial bound before anything is multiplied. */
   powerTerms: 1_000,
   /** Elementary steps (of about a microsecond each) that multiplying out the whole text may take. */
-  steps: 40_000,
+  steps: 30_000,
   fields: 40,
   parameters: 200,
   nameLength: 40,

@@ -46,8 +46,11 @@ const factorsKey = (factors: readonly FieldFactor[]): string =>
   factors.map(({ field, conjugate }) => (conjugate ? `${field}^*` : field)).join(' ');
 
 /** Everything but the number: monomials with equal keys are like terms (up to the order of factors under derivatives). */
-export const monomialKey = (m: Monomial): string =>
-  `${powersKey(m.powers)}|${factorsKey(m.factors)}|${m.pairs.join(';')}|${m.open.map(({ index, at }) => `${index ?? ''}@${at}`).join(';')}`;
+export function monomialKey(m: Monomial): string {
+  const plain = `${powersKey(m.powers)}|${factorsKey(m.factors)}`;
+  if (m.pairs.length + m.open.length === 0) return plain;
+  return `${plain}|${m.pairs.join(';')}|${m.open.map(({ index, at }) => `${index ?? ''}@${at}`).join(';')}`;
+}
 
 export function compareFactors(a: FieldFactor, b: FieldFactor): number {
   if (a.field !== b.field) return a.field < b.field ? -1 : 1;
