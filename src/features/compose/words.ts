@@ -45,7 +45,7 @@ const COUNTS = ['tree level', 'one loop', 'two loops', 'three loops', 'four loop
 const RAISED: Readonly<Record<string, string>> = Object.fromEntries(
   [...'0123456789-/'].map((digit, at) => [digit, [...'⁰¹²³⁴⁵⁶⁷⁸⁹⁻⸍'][at]!]),
 );
-const raised = (power: string): string => [...power].map((digit) => RAISED[digit] ?? digit).join('');
+export const raised = (power: string): string => [...power].map((digit) => RAISED[digit] ?? digit).join('');
 
 /** "h h s s" as "h² s²", "phi phi^*" as "φ φ*": the fields of a vertex. */
 export function monomialWords(fields: readonly string[]): string {

@@ -1,10 +1,10 @@
 import type { DiagramPageData } from '#contract/api.ts';
-import { nameWords } from '#features/compose/words.ts';
+import { nameWords, raised } from '#features/compose/words.ts';
 
-/** A coupling monomial of a diagram as one reads it: "λ^2 ρ". */
+/** A coupling monomial of a diagram as one reads it: "λ² ρ". */
 export const couplingWords = (order: Readonly<Record<string, string>>): string =>
   Object.entries(order)
-    .map(([name, power]) => (power === '1' ? nameWords(name) : `${nameWords(name)}^${power}`))
+    .map(([name, power]) => (power === '1' ? nameWords(name) : `${nameWords(name)}${raised(power)}`))
     .join(' ') || '1';
 
 /** What is true of a diagram, for its list of facts. */

@@ -14,6 +14,7 @@ function show(event: ExpansionEvent): void {
     if (event.state !== 'queued' && event.state !== 'running') location.reload();
     return;
   }
+  if (event.type === 'diagrams') window.dispatchEvent(new Event('wickwork:diagrams'));
   if (event.type === 'progress') {
     const { classes, estimated, fraction, phase } = event.progress;
     if (meter && fraction !== null) meter.value = fraction;

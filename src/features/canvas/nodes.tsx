@@ -1,0 +1,56 @@
+import { memo } from 'react';
+import type { NodeProps } from 'reactflow';
+import type { DiagramRow } from '#contract/api.ts';
+
+export interface DiagramData {
+  readonly row: DiagramRow;
+}
+
+/** All strokes of one manner as one path: a node keeps to a handful of elements, so that hundreds of them pan smoothly. */
+const joined = (row: DiagramRow, leg: boolean, solid: boolean): string =>
+  row.drawing.paths
+    .filter((path) => path.leg === leg && (path.style === 'solid') === solid)
+    .map(({ d }) => d)
+    .join('');
+
+export const DiagramNode = memo(function DiagramNode({ data }: NodeProps<DiagramData>) {
+  const { row } = data;
+  const { width, height, dots } = row.drawing;
+  const plain = joined(row, false, true);
+  const styled = joined(row, false, false);
+  return (
+    <svg className="diagram" width={width} height={height} viewBox={`0 0 ${width} ${height}`} aria-hidden="true">
+      <path d={plain} />
+      {styled !== '' && <path className="dashed" d={styled} />}
+      {row.legs.length > 0 && <path className="leg" d={joined(row, true, true) + joined(row, true, false)} />}
+      <path className="dots" d={dots} />
+    </svg>
+  );
+});
+
+export interface PlateData {
+  readonly title: string;
+  readonly subject: string;
+  readonly count: number;
+  readonly shown: number;
+  readonly open: (() => void) | null;
+}
+
+export const PlateNode = memo(function PlateNode({ data }: NodeProps<PlateData>) {
+  const { title, subject, count, shown, open } = data;
+  return (
+    <div className="canvas-plate">
+      <b>
+        {title} — {subject}
+      </b>
+      <span>{shown < count ? `${shown} of ${count.toLocaleString('en-GB')}` : count.toLocaleString('en-GB')}</span>
+      {open && (
+        <button type="button" className="link-btn" onClick={open}>
+          {shown === 0 ? 'Open' : 'More'}
+        </button>
+      )}
+    </div>
+  );
+});
+
+export const nodeTypes = { diagram: DiagramNode, plate: PlateNode };
