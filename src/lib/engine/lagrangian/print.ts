@@ -172,6 +172,9 @@ function sum(terms: readonly Term[], style: Style): string {
 export const termText = (term: Term): string => sum([term], TEXT);
 export const termLatex = (term: Term): string => sum([term], LATEX);
 
+/** A sum of terms as it is typed; "0" for none. */
+export const termsText = (terms: readonly Term[]): string => (terms.length === 0 ? '0' : sum(terms, TEXT));
+
 /** The normal form as a text that parses to the same model. */
 export const modelText = (model: Model): string => sum(termsOf(model), TEXT);
 /** The normal form in LaTeX that parses to the same model. */
