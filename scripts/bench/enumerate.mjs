@@ -26,7 +26,7 @@ await build({
 });
 
 const realField = (valence) => ({ partner: [0], kinds: [[valence]] });
-const phi4 = (order) => ({ theory: realField(4), legs: [], contents: [[order]], components: 'connected' });
+const phi4 = (order) => ({ theory: realField(4), legs: [], contents: [[order]], options: { components: 'connected' } });
 const command = (what) => `'${process.execPath}' '${child}' '${bundle}' '${JSON.stringify(what)}'`;
 
 function generate(what) {
@@ -82,8 +82,8 @@ function contents(kinds, n) {
   return Array.from({ length: n + 1 }, (_, i) => contents(kinds - 1, n - i).map((rest) => [i, ...rest])).flat();
 }
 
-function rate(name, theory, legs, contents) {
-  const { classes, seconds } = generate({ theory, legs, contents, components: 'connected' });
+function rate(name, theory, legs, contents, options = { components: 'connected' }) {
+  const { classes, seconds } = generate({ theory, legs, contents, options });
   console.log(`${name.padEnd(38)}${String(classes).padStart(8)} classes, ${Math.round(classes / seconds)} per second`);
 }
 
@@ -94,3 +94,4 @@ rate('h⁴, s⁴, h²s² vacuum, total order 7', portal, [], contents(3, 7));
 rate('h⁴, s⁴, h²s² ⟨hhss⟩, total order 5', portal, [0, 0, 1, 1], contents(3, 5));
 rate('φ⁴ four-point, order 7', realField(4), [0, 0, 0, 0], [[7]]);
 rate('(φ*φ)² two-point, order 8', { partner: [1, 0], kinds: [[2, 2]] }, [0, 1], [[8]]);
+rate('φ³ two-point, 1PI, order 12', realField(3), [0, 0], [[12]], { components: 'connected', noBridges: true });
