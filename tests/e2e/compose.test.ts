@@ -161,6 +161,7 @@ describe('computations', () => {
     await alive(page);
     await page.getByRole('button', { name: 'Expand' }).click();
     await page.waitForURL(MADE);
+    const id = MADE.exec(page.url())![1];
     await page.goto('/jobs');
     await alive(page);
     await page.getByRole('button', { name: 'Cancel: test job: slow' }).click();
@@ -168,8 +169,12 @@ describe('computations', () => {
     const ended = page.getByRole('region', { name: 'Ended' });
     expect(await ended.textContent()).toContain('Cancelled');
     await page.getByRole('button', { name: 'Try again: test job: slow' }).click();
-    await page.getByRole('button', { name: 'Cancel: test job: slow' }).click();
+    await page.getByRole('button', { name: 'Cancel: test job: slow' }).waitFor();
+    await alive(page);
+    // Cancelled elsewhere: the page sees it by itself.
+    await page.evaluate((path) => fetch(path, { method: 'DELETE' }), `/api/v1/expansions/${id}`);
     await page.getByRole('button', { name: 'Try again: test job: slow' }).waitFor();
+    expect(await page.getByRole('region', { name: 'Under way' }).textContent()).toContain('Nothing');
   });
 });
 
@@ -183,6 +188,19 @@ describe('every screen', () => {
       expect([path, await faults(page), await overflows(page)]).toEqual([path, [], false]);
       await page.context().close();
     }
+  });
+
+  it('needs less than 125 KiB of scripts for the composer', async () => {
+    const page = await stage.open('/expansions/new');
+    await alive(page);
+    const bytes = await page.evaluate(() =>
+      performance
+        .getEntriesByType('resource')
+        .filter(({ name }) => name.endsWith('.js'))
+        .map((entry) => (entry as PerformanceResourceTiming).encodedBodySize),
+    );
+    expect(bytes.length).toBeGreaterThan(3);
+    expect(bytes.reduce((sum, size) => sum + size, 0)).toBeLessThan(125 * 1024);
   });
 
   it('writes no error to the console', () => {

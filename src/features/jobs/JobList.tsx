@@ -24,12 +24,13 @@ export default function JobList({ jobs: first, now: firstNow }: Props) {
   const running = jobs.filter(isUnderWay);
   const busy = running.length > 0;
 
+  // biome-ignore lint/correctness/useExhaustiveDependencies: the timer starts anew when what runs changes, not at each look
   useEffect(() => {
     const control = new AbortController();
     const look = async () => {
       if (document.hidden) return;
       try {
-        setJobs(await fetchJobs(control.signal));
+        setJobs(await lookAgain(jobs, control.signal));
         setFailed(false);
       } catch {
         if (!control.signal.aborted) setFailed(true);
@@ -41,7 +42,7 @@ export default function JobList({ jobs: first, now: firstNow }: Props) {
       clearInterval(timer);
       control.abort();
     };
-  }, [busy]);
+  }, [idsOf(running)]);
 
   return (
     <>
@@ -51,8 +52,8 @@ export default function JobList({ jobs: first, now: firstNow }: Props) {
       {failed && <p className="notice notice-caution">The server does not answer; what stands here may be old.</p>}
       <Group title="Under way" jobs={running} now={now} none="Nothing is being computed." />
       <Group title="Ended" jobs={jobs.filter((job) => !isUnderWay(job))} now={now} none="Nothing has ended yet." />
-      {!alive && busy && (
-        <p className="mt-6">
+      {busy && (
+        <p className="mt-6 only-scriptless">
           <a className="btn" href="/jobs">
             Look again
           </a>
@@ -62,13 +63,20 @@ export default function JobList({ jobs: first, now: firstNow }: Props) {
   );
 }
 
-async function fetchJobs(signal: AbortSignal): Promise<readonly Job[]> {
-  const page = async (state: 'active' | 'ended', limit: number) => {
-    const reply = await fetch(`/api/v1/expansions?mine=true&state=${state}&limit=${limit}`, { signal });
-    if (!reply.ok) throw new Error(`the server answered ${reply.status}`);
-    return ((await reply.json()) as Page<ExpansionRecord>).items.map(jobOf);
-  };
-  return (await Promise.all([page('active', 60), page('ended', 20)])).flat();
+async function fetchJobs(state: 'active' | 'ended', limit: number, signal: AbortSignal): Promise<readonly Job[]> {
+  const reply = await fetch(`/api/v1/expansions?mine=true&state=${state}&limit=${limit}`, { signal });
+  if (!reply.ok) throw new Error(`the server answered ${reply.status}`);
+  return ((await reply.json()) as Page<ExpansionRecord>).items.map(jobOf);
+}
+
+const idsOf = (jobs: readonly Job[]): string => jobs.map(({ id }) => id).join(' ');
+
+/** The jobs as they are now. Ended ones are large and do not change: they are asked for only when one may have been added. */
+async function lookAgain(before: readonly Job[], signal: AbortSignal): Promise<readonly Job[]> {
+  const active = await fetchJobs('active', 60, signal);
+  const same = active.length > 0 && idsOf(active) === idsOf(before.filter(isUnderWay));
+  const ended = same ? before.filter((job) => !isUnderWay(job)) : await fetchJobs('ended', 20, signal);
+  return [...active, ...ended];
 }
 
 interface GroupProps {
