@@ -58,7 +58,6 @@ export class ModelBuilder {
     }
     this.refuseMissingKinetic(diagonal);
     this.refuseNonHermitian();
-    this.refuseDiagonalisation(mixing);
     const { conventions } = this.settings;
     const propagators = [...this.fields.values()].map((field) =>
       propagatorOf(this.source, field, diagonal.get(field.name)!, conventions),
@@ -99,16 +98,6 @@ export class ModelBuilder {
       'not-hermitian',
       `The Lagrangian is not hermitian: ${piece} stands without its conjugate. Add it, or write "+ h.c.".`,
       span,
-    );
-  }
-
-  private refuseDiagonalisation(mixing: readonly Term[]): void {
-    const [first] = mixing;
-    if (!first || !this.settings.diagonalise) return;
-    throw this.source.fault(
-      'unsupported',
-      'Diagonalising a mass matrix is not offered yet; with "mixing": "vertex" this term is a two-point vertex.',
-      first.span ?? NOWHERE,
     );
   }
 

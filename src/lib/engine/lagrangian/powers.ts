@@ -115,6 +115,8 @@ export class PowerRule {
   }
 
   private integer(value: Polynomial, n: number, span: Span): Polynomial {
+    if (n === 0 && value.length === 0)
+      throw this.source.fault('syntax', 'Zero to the power zero is not defined.', span);
     const bound = multinomialBound(value.length, n, BOUNDS.powerTerms);
     if (bound > BOUNDS.powerTerms)
       throw this.source.limit(

@@ -1,6 +1,7 @@
 import { InputError, LimitError } from '../errors.ts';
 import type { Node, Summand } from './ast.ts';
 import { ModelBuilder } from './build.ts';
+import { diagonalisingRotations, rotated } from './diagonalise.ts';
 import { Evaluator } from './evaluate.ts';
 import { type ModelSource, readSettings, type Settings } from './input.ts';
 import type { Model, Note } from './model.ts';
@@ -8,6 +9,7 @@ import { type Usage, usageOf } from './names.ts';
 import { normalForm, type Placed, refuseTooManyTerms } from './normal.ts';
 import { type Parsed, parse } from './parser.ts';
 import { readingNotes, refuseOutOfScope, suggestField } from './reading.ts';
+import { Source } from './source.ts';
 import { readStructured } from './structured.ts';
 import { summandsLatex } from './typeset.ts';
 
@@ -69,6 +71,23 @@ function fromText(parsed: Parsed, settings: Settings): Model {
   return builder.build(notes);
 }
 
+/** The model in fields without mass mixing; notes say which rotations were done. Its terms have no places in the text. */
+function withoutMixing(typed: Model, input: ModelSource): Model {
+  const notes: Note[] = typed.notes.filter(({ code }) => code !== 'mixing');
+  const source = new Source(input.lagrangian ?? '', null, input.lagrangian !== undefined);
+  let model = typed;
+  for (const rotation of diagonalisingRotations(typed, source)) {
+    const [a, b] = rotation.fields;
+    const { model: _, mixing: __, ...tables } = input;
+    const read = readModel({ ...tables, lagrangian: rotated(model, rotation) });
+    const message = `${a} and ${b} were rotated so that their masses do not mix: ${a} → c ${a} − s ${b}, ${b} → s ${a} + c ${b} with c = ${rotation.cosine}, s = ${rotation.sine}.`;
+    notes.push({ code: 'rotated', message, span: null });
+    const kinds = read.kinds.map((kind) => ({ ...kind, terms: kind.terms.map((term) => ({ ...term, span: null })) }));
+    model = { ...read, kinds };
+  }
+  return { ...model, notes };
+}
+
 /**
  * Reads a model: a Lagrangian text (plain, Unicode, LaTeX in any mixture) or a list of terms, into its normal form.
  *
@@ -79,6 +98,11 @@ function fromText(parsed: Parsed, settings: Settings): Model {
  */
 export function readModel(input: ModelSource): Model {
   const settings = readSettings(input);
+  const model = readAsTyped(input, settings);
+  return settings.diagonalise ? withoutMixing(model, input) : model;
+}
+
+function readAsTyped(input: ModelSource, settings: Settings): Model {
   if (input.lagrangian !== undefined && input.model === undefined) return fromText(parse(input.lagrangian), settings);
   if (input.model !== undefined && input.lagrangian === undefined) return readStructured(input.model.terms, settings);
   throw new InputError('bad-request', 'Give either "lagrangian" or "model", exactly one of them.');
