@@ -55,7 +55,15 @@ function distinct(all: readonly Counts[]): Counts[] {
 }
 
 /** Where each type stands in the packed words. */
-function layout(most: Counts): { word: number[]; shift: number[]; words: number; guard: Int32Array } {
+interface Layout {
+  readonly word: readonly number[];
+  readonly shift: readonly number[];
+  readonly words: number;
+  readonly guard: Int32Array;
+}
+
+/** most[h]: the largest count of type h that is to be packed. */
+function layout(most: Counts): Layout {
   const word: number[] = [];
   const shift: number[] = [];
   const guards: number[] = [0];
@@ -74,6 +82,17 @@ function layout(most: Counts): { word: number[]; shift: number[]; words: number;
   return { word, shift, words: guards.length, guard: Int32Array.from(guards) };
 }
 
+function pack(list: readonly Counts[], { word, shift, words }: Layout): Int32Array {
+  const packed = new Int32Array(list.length * words);
+  list.forEach((counts, i) => {
+    counts.forEach((count, h) => {
+      packed[i * words + word[h]!]! += count << shift[h]!;
+    });
+  });
+  return packed;
+}
+
+/** Entry s: the largest code of size ≤ s. */
 function largestWithin(size: Int32Array, most: number): Int32Array {
   return Int32Array.from({ length: most + 1 }, (_, s) => {
     let code = size.length - 1;
@@ -106,15 +125,6 @@ export function joinTable(nodes: readonly Counts[], theory: Theory): JoinTable {
   ]);
   const own = distinct([partner.map(() => 0), ...selfJoins(unlike, theory)]);
   const places = layout(partner.map((_, h) => Math.max(0, ...nodes.map((counts) => counts[h]!))));
-  const pack = (list: readonly Counts[]): Int32Array => {
-    const packed = new Int32Array(list.length * places.words);
-    list.forEach((counts, i) => {
-      counts.forEach((count, h) => {
-        packed[i * places.words + places.word[h]!]! += count << places.shift[h]!;
-      });
-    });
-    return packed;
-  };
   const rank = new Map(between.map((counts, code) => [counts.join(), code]));
   const degree = Int32Array.from(nodes, total);
   const size = Int32Array.from(between, total);
@@ -123,16 +133,16 @@ export function joinTable(nodes: readonly Counts[], theory: Theory): JoinTable {
   return {
     words: places.words,
     guard: places.guard,
-    need: pack(between),
+    need: pack(between, places),
     size,
     back: Int32Array.from(between, (counts) => rank.get(partner.map((h) => counts[h]).join())!),
     counts: between,
     top: largestWithin(size, most),
-    selfNeed: pack(own),
+    selfNeed: pack(own, places),
     selfSize,
     selfCounts: own,
     selfTop: largestWithin(selfSize, most),
-    halfLines: pack(nodes),
+    halfLines: pack(nodes, places),
     degree,
   };
 }
