@@ -48,11 +48,7 @@ export class Evaluator {
       case 'number':
         return node.value.num === 0n ? [] : [constant(fromRational(node.value))];
       case 'name':
-        return [
-          this.names.fields.has(node.name)
-            ? fieldMonomial({ field: node.name, conjugate: false })
-            : parameterMonomial(node.name),
-        ];
+        return [this.symbol(node.name)];
       case 'imaginary':
         return [constant(IMAGINARY)];
       case 'pi':
@@ -86,6 +82,10 @@ export class Evaluator {
           node,
         );
     }
+  }
+
+  private symbol(name: string): Monomial {
+    return this.names.fields.has(name) ? fieldMonomial({ field: name, conjugate: false }) : parameterMonomial(name);
   }
 
   conjugate(value: Polynomial): Polynomial {
