@@ -1,3 +1,4 @@
+import type { DrawingDTO } from '#engine/drawing/types.ts';
 import type { ErrorObject } from './errors.ts';
 import type { ExpansionRequest, ModelInput } from './request.ts';
 import type { ConventionRecord, DiagramDTO, EngineStamp, LedgerDTO, RulesDTO, Summary, WorkingDTO } from './result.ts';
@@ -129,15 +130,7 @@ export interface DiagramRow extends DiagramDTO {
   description: string;
 }
 
-/** A drawing ready to stroke: coordinates in a common unit (dots, strokes and loops have one size in every drawing). */
-export interface DrawingDTO {
-  width: number;
-  height: number;
-  /** SVG path data, grouped by style: internal lines and legs per field index style. */
-  paths: { d: string; style: 'solid' | 'dashed' | 'dotted' | 'dashdot'; leg: boolean }[];
-  dots: string;
-  labels: { x: number; y: number; text: string; anchor: 'start' | 'middle' | 'end' }[];
-}
+export type { DrawingDTO };
 
 /** GET /api/v1/expansions/{id}/diagrams/{label} */
 export interface DiagramPageData extends DiagramRow {

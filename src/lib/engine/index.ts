@@ -9,7 +9,7 @@ export { plainVertexNumber } from './answer/coefficient.ts';
 export type { CompactDiagram } from './answer/compact.ts';
 export { FLAGS } from './answer/compact.ts';
 export { answerDiagram } from './answer/diagram.ts';
-export { drawingOf } from './answer/drawing.ts';
+export { drawingOf, pictureOf } from './answer/drawing.ts';
 export { type EngineEstimate, estimate } from './answer/estimate.ts';
 export type { LedgerBody } from './answer/ledger.ts';
 export { orderWords } from './answer/order.ts';
@@ -26,4 +26,5 @@ export {
 export { type RunEnd, runExpansion, type SummaryBody } from './answer/run.ts';
 export { ENGINE, ENGINE_VERSION } from './answer/version.ts';
 export { working, workingOf } from './answer/working.ts';
+export type { DrawingDTO, Picture } from './drawing/types.ts';
 export type { Model, VertexKind } from './lagrangian/model.ts';

@@ -1,38 +1,41 @@
+import type { Manner } from '../drawing/toDrawing.ts';
+import { drawingOfPicture, toPicture } from '../drawing/toDrawing.ts';
+import type { DrawingDTO, LineStyle, Picture } from '../drawing/types.ts';
+import { nameLetters } from '../lagrangian/letters.ts';
 import { type CompactDiagram, unpackBody } from './compact.ts';
 import type { Prepared } from './prepare.ts';
+import type { NamedTheory } from './theory.ts';
 
-/** interim: vertices on a circle; replaced by engine/drawing when it lands */
-export function drawingOf({ names }: Prepared, compact: CompactDiagram) {
-  const { kinds, legs, lines } = unpackBody(compact.body);
-  const n = kinds.length;
-  const at = (v: number) => ({
-    x: 70 + 40 * Math.cos((2 * Math.PI * v) / n),
-    y: 60 + 40 * Math.sin((2 * Math.PI * v) / n),
-  });
-  const seen = new Map<string, number>();
-  const paths = lines.map(({ from, to }) => {
-    const [a, b] = [at(from), at(to)];
-    const key = `${Math.min(from, to)},${Math.max(from, to)}`;
-    const k = seen.get(key) ?? 0;
-    seen.set(key, k + 1);
-    const bend = (k % 2 ? -1 : 1) * 14 * Math.ceil(k / 2 + 0.5);
-    const d =
-      from === to
-        ? `M${a.x} ${a.y}c20 -20 20 20 0 0`
-        : `M${a.x} ${a.y}Q${(a.x + b.x) / 2 + bend} ${(a.y + b.y) / 2 + bend} ${b.x} ${b.y}`;
-    return { d, style: 'solid' as const, leg: false };
-  });
-  const legPaths = legs.flatMap((v, k) =>
-    v < 0
-      ? []
-      : [{ d: `M${at(v).x} ${at(v).y}L${k % 2 ? 130 : 10} ${15 + 20 * k}`, style: 'solid' as const, leg: true }],
-  );
-  const dots = kinds.map((_, v) => `M${at(v).x - 3} ${at(v).y}a3 3 0 1 0 6 0a3 3 0 1 0 -6 0`).join('');
-  const labels = legs.map((_, k) => ({
-    x: k % 2 ? 134 : 6,
-    y: 15 + 20 * k,
-    text: names.legs[k]!,
-    anchor: k % 2 ? ('start' as const) : ('end' as const),
-  }));
-  return { width: 140, height: 120, paths: [...paths, ...legPaths], dots, labels };
+const STYLES: readonly LineStyle[] = ['solid', 'dashed', 'dotted', 'dashdot'];
+
+/** Line styles by field: charged fields first (solid, with arrows), then the others. Beyond four fields they repeat; labels tell them apart. */
+function styleOf({ halves, theory }: NamedTheory): (type: number) => LineStyle {
+  const rank = (at: number): string => `${theory.partner[at] === at ? 1 : 0} ${halves[at]!.field}`;
+  const fields = [...new Set(halves.map((_, at) => rank(at)))].sort();
+  return (type) => STYLES[fields.indexOf(rank(type)) % STYLES.length]!;
 }
+
+const LOWERED = '₀₁₂₃₄₅₆₇₈₉';
+
+/** "h₁", "φ*₂": external points are labelled, so each leg carries its number where there are several. */
+function legLabel(name: string, at: number, count: number): string {
+  const letters = name.endsWith('^*') ? `${nameLetters(name.slice(0, -2))}*` : nameLetters(name);
+  const number = [...String(at + 1)].map((digit) => LOWERED[Number(digit)]).join('');
+  return count > 1 ? letters + number : letters;
+}
+
+/** How a model's diagrams are drawn. */
+export const mannerOf = (named: NamedTheory, legTypes: readonly number[], legNames: readonly string[]): Manner => ({
+  legTypes,
+  legLabels: legNames.map((name, at) => legLabel(name, at, legNames.length)),
+  styleOf: styleOf(named),
+});
+
+/** A stored diagram part by part, with the line styles and labels of its model. */
+export function pictureOf({ names, canonical }: Prepared, compact: CompactDiagram): Picture {
+  return toPicture(unpackBody(compact.body), names.theory, mannerOf(names, canonical.request.legs, names.legs));
+}
+
+/** A stored diagram ready to stroke. */
+export const drawingOf = (prepared: Prepared, compact: CompactDiagram): DrawingDTO =>
+  drawingOfPicture(pictureOf(prepared, compact));

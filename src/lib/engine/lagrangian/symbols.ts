@@ -38,6 +38,10 @@ const NAMED_COMMANDS: ReadonlySet<string> = new Set(['ell', 'hbar']);
 
 export const isNamedCommand = (command: string): boolean => GREEK.has(command) || NAMED_COMMANDS.has(command);
 
+const LETTERS = new Map([...GREEK_CHARACTERS].reverse().map(([character, name]) => [name, character]));
+/** The character of a Greek name, or null. */
+export const greekLetter = (name: string): string | null => LETTERS.get(name) ?? null;
+
 /** The name of a Greek (or ℓ, ħ) character, or null. */
 export const greekName = (character: string): string | null => GREEK_CHARACTERS.get(character) ?? null;
 
