@@ -113,11 +113,12 @@ CREATE TABLE `diagrams` (
 	`order_key` text NOT NULL,
 	`shape` text NOT NULL,
 	`flags` integer NOT NULL,
+	`picture` text,
 	PRIMARY KEY(`body_id`, `position`),
 	FOREIGN KEY (`body_id`) REFERENCES `bodies`(`id`) ON UPDATE no action ON DELETE cascade
 ) WITHOUT ROWID, STRICT;
 --> statement-breakpoint
-CREATE UNIQUE INDEX `diagrams_label` ON `diagrams` (`body_id`,`label`);--> statement-breakpoint
+CREATE INDEX `diagrams_label` ON `diagrams` (`body_id`,`label`);--> statement-breakpoint
 CREATE INDEX `diagrams_loops` ON `diagrams` (`body_id`,`loops`,`position`);--> statement-breakpoint
 CREATE INDEX `diagrams_factor` ON `diagrams` (`body_id`,length("symmetry_factor"),`symmetry_factor`,`position`);--> statement-breakpoint
 CREATE INDEX `diagrams_shape` ON `diagrams` (`body_id`,`shape`,`position`);--> statement-breakpoint

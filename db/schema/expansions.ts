@@ -44,10 +44,13 @@ export const diagrams = sqliteTable(
     order: text('order_key').notNull(),
     shape: text('shape').notNull(),
     flags: integer('flags').notNull(),
+    /** Coordinates for the drawing, name-free; null beyond the first of a long list, which are laid out when they are asked for. */
+    picture: text('picture'),
   },
   (table) => [
     primaryKey({ columns: [table.bodyId, table.position] }),
-    uniqueIndex('diagrams_label').on(table.bodyId, table.label),
+    // Not unique: two diagrams can be the same with names forgotten, a loop of h and a loop of s.
+    index('diagrams_label').on(table.bodyId, table.label),
     index('diagrams_loops').on(table.bodyId, table.loops, table.position),
     index('diagrams_factor').on(
       table.bodyId,

@@ -8,6 +8,8 @@ import { assertRules } from './symbolic.ts';
 const CHUNK_ROWS = 100;
 /** Rows go out at least this often, so that the first diagrams are seen at once. */
 const CHUNK_MS = 150;
+/** Diagrams that are laid out here, so that the server draws them at once; beyond them it lays out what is asked for. */
+const PICTURES = 1_000;
 /** Chunks that may be under way: the child never runs ahead of the disk. */
 const WINDOW = 2;
 
@@ -59,7 +61,7 @@ class Outlet {
 async function expand(task: JobTask): Promise<JobEnd> {
   const prepared = prepare(task.request);
   const outlet = new Outlet();
-  const run = runExpansion(prepared);
+  const run = runExpansion(prepared, { pictures: PICTURES });
   // The independent count comes first: nothing streams until it is done.
   post({ kind: 'progress', classes: 0, phase: 'counting' });
   let classes = 0;

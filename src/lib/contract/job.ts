@@ -25,6 +25,8 @@ export interface StoredDiagram {
   order: string;
   shape: string;
   flags: number;
+  /** Layout of the drawing, for the first diagrams of a list. */
+  picture: string | null;
 }
 
 /** Child → server. The child waits when too many chunks are unacknowledged. */

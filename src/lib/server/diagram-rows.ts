@@ -4,7 +4,7 @@ import { runtime } from './runtime.ts';
 
 type Value = string | number;
 
-const COLUMNS = `position, label, body, loops, symmetry_factor AS symmetryFactor, weight, pairings, order_key AS "order", shape, flags`;
+const COLUMNS = `position, label, body, loops, symmetry_factor AS symmetryFactor, weight, pairings, order_key AS "order", shape, flags, picture`;
 
 function all<Row>(sql: string, values: readonly Value[]): Row[] {
   return runtime()

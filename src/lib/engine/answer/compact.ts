@@ -23,6 +23,8 @@ export interface CompactDiagram {
   readonly shape: string;
   /** Sum of FLAGS. */
   readonly flags: number;
+  /** Layout of the drawing (drawing/packed), or null where it was not kept. */
+  readonly picture: string | null;
 }
 
 export const FLAGS = { connected: 1, onePI: 2, selfContraction: 4, tadpole: 8 } as const;

@@ -1,3 +1,5 @@
+import { layout, usualSides } from '../drawing/layout.ts';
+import { unpackLayout } from '../drawing/packed.ts';
 import type { Manner } from '../drawing/toDrawing.ts';
 import { drawingOfPicture, toPicture } from '../drawing/toDrawing.ts';
 import type { DrawingDTO, LineStyle, Picture } from '../drawing/types.ts';
@@ -31,9 +33,13 @@ export const mannerOf = (named: NamedTheory, legTypes: readonly number[], legNam
   styleOf: styleOf(named),
 });
 
-/** A stored diagram part by part, with the line styles and labels of its model. */
+/** A stored diagram part by part, with the line styles and labels of its model; laid out anew where no layout was kept. */
 export function pictureOf({ names, canonical }: Prepared, compact: CompactDiagram): Picture {
-  return toPicture(unpackBody(compact.body), names.theory, mannerOf(names, canonical.request.legs, names.legs));
+  const diagram = unpackBody(compact.body);
+  const placed = compact.picture
+    ? unpackLayout(compact.picture, diagram, usualSides(diagram.legs.length))
+    : layout(diagram);
+  return toPicture(diagram, names.theory, mannerOf(names, canonical.request.legs, names.legs), placed);
 }
 
 /** A stored diagram ready to stroke. */

@@ -47,7 +47,7 @@ export function namedDiagram(
   named: NamedTheory,
   legNames: readonly string[],
   diagram: Diagram & { readonly numberings: readonly Numbering[] },
-  stored: Omit<CompactDiagram, 'position' | 'body' | 'order'>,
+  stored: Omit<CompactDiagram, 'position' | 'body' | 'order' | 'picture'>,
 ): DiagramDTO {
   return {
     id: diagramId({ bare: stored.label, numberings: diagram.numberings }, namesOf(named)),

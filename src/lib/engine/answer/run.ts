@@ -1,3 +1,5 @@
+import { layout } from '../drawing/layout.ts';
+import { packLayout } from '../drawing/packed.ts';
 import { add, format, type Rational, rational, ZERO } from '../exact/rational.ts';
 import { expandRequest } from '../expansion/expand.ts';
 import { passesDrop } from '../expansion/filters.ts';
@@ -57,9 +59,13 @@ function excludedKinds(request: CountingRequest, contents: readonly Content[]): 
  * The expansion of a prepared request as a stream of compact diagrams in canonical order; returns the summary and the
  * balanced (or not) ledger at the end. Ending the generator early cancels. Memory: one diagram at a time.
  *
+ * `pictures`: how many of the first diagrams are laid out for their drawings.
  * The uncut list is summed alongside when filters drop something, since a cut without an independent sum rests on it.
  */
-export function* runExpansion(prepared: Prepared): Generator<CompactDiagram, RunEnd> {
+export function* runExpansion(
+  prepared: Prepared,
+  options: { readonly pictures: number } = { pictures: 0 },
+): Generator<CompactDiagram, RunEnd> {
   const { request } = prepared.canonical;
   const proof: LedgerSums = independentSums(request);
   const cut = new Sums();
@@ -83,6 +89,7 @@ export function* runExpansion(prepared: Prepared): Generator<CompactDiagram, Run
       order: diagram.content.join(),
       shape: shapeLabel(diagram, request, body),
       flags: factsFlags(diagram.facts),
+      picture: position <= options.pictures ? packLayout(layout(diagram)) : null,
     };
   }
   const compared = balance(proof, cut.rows, uncut.rows);

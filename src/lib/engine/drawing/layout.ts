@@ -1,8 +1,8 @@
 import type { Diagram } from '../graph/diagram.ts';
 import { type Component, componentsOf } from './blocks.ts';
-import type { Curve } from './geometry.ts';
+import { type Curve, round } from './geometry.ts';
 import type { Leg } from './legs.ts';
-import { bodiesOf, shapeOf, turnedShape } from './place.ts';
+import { type Body, bodiesOf, shapeOf, turnedShape } from './place.ts';
 import { boundsOf, type Candidate, innerCost, outerCost, withLegs } from './score.ts';
 import type { Point, Side } from './types.ts';
 
@@ -35,9 +35,22 @@ const leansOf = (legs: readonly Leg[]): readonly number[] => {
   return alone ? [0] : [0.5, 1.5];
 };
 
+/** Bodies without those that came out alike. */
+function distinct(bodies: readonly Body[]): Body[] {
+  const seen = new Map<string, Body>();
+  for (const body of bodies) {
+    const key = [...body.vertices]
+      .map(([v, { x, y }]) => `${v} ${round(x)} ${round(y)}`)
+      .sort()
+      .join();
+    if (!seen.has(key)) seen.set(key, body);
+  }
+  return [...seen.values()];
+}
+
 /** The best drawing of one component: every good shape, turned and mirrored, judged with its legs. */
 function best(component: Component, diagram: Diagram, legs: readonly Leg[]): Candidate {
-  const shapes = bodiesOf(component, diagram, new Set(legs.map(({ vertex }) => vertex)))
+  const shapes = distinct(bodiesOf(component, diagram, new Set(legs.map(({ vertex }) => vertex))))
     .map(shapeOf)
     .map((shape) => ({ shape, inner: innerCost(shape) }))
     .sort((a, b) => a.inner - b.inner)
@@ -51,7 +64,7 @@ function best(component: Component, diagram: Diagram, legs: readonly Leg[]): Can
         const turned = turnedShape(shape, (2 * Math.PI * turn) / TURNS, mirrored);
         for (const lean of leansOf(legs)) {
           const candidate = withLegs(turned, legs, lean);
-          const cost = inner + outerCost(candidate, legs);
+          const cost = inner + outerCost(candidate, legs, least - inner);
           if (cost < least - 1e-6) {
             least = cost;
             chosen = candidate;

@@ -55,8 +55,6 @@ function legCost({ shape, ends }: Candidate, legs: readonly Leg[]): number {
     for (const curve of shape.strokes) cost += LEG_CROSSING * crossings(line, curve);
     for (let j = i + 1; j < lines.length; j++) cost += LEG_CROSSING * crossings(line, lines[j]!);
     for (const [v, p] of shape.vertices) if (v !== legs[i]!.vertex && distanceToCurve(p, line) < CLEAR) cost += TOUCH;
-    const [from, to] = line as [Point, Point];
-    cost += Math.hypot(to.x - from.x, to.y - from.y) * LONG + Math.abs(to.y - from.y) * STEEP;
   });
   return cost;
 }
@@ -90,20 +88,35 @@ function asymmetry({ vertices, strokes }: Shape): number {
   return Math.min(off(upright), off(level));
 }
 
-/** What makes a turned shape less pleasing: legs that cross or run long, pieces that hang down, a tilt, no mirror. */
-export function outerCost(candidate: Candidate, legs: readonly Leg[]): number {
+/** What is cheap to tell: height, pieces that hang down or stand askew, tilt and disorder of legs. */
+function postureCost(candidate: Candidate, legs: readonly Leg[]): number {
   const { shape, ends, bounds } = candidate;
   const width = bounds.right - bounds.left;
   const height = bounds.bottom - bounds.top;
-  const crooked = asymmetry(shape) * CROOKED;
-  if (legs.length === 0) return height * HEIGHT + (height > width + 1 ? 5 : 0) + crooked;
-  let cost = legCost(candidate, legs) + disorder(candidate, legs) + height * HEIGHT + crooked;
+  if (legs.length === 0) return height * HEIGHT + (height > width + 1 ? 5 : 0);
+  let cost = disorder(candidate, legs) + height * HEIGHT;
   const attached = new Set(legs.map(({ vertex }) => vertex));
   const level = legs.reduce((sum, { vertex }) => sum + shape.vertices.get(vertex)!.y, 0) / legs.length;
   for (const [v, { y }] of shape.vertices) if (!attached.has(v) && y > level) cost += (y - level) * HANGING;
   for (const { loop } of shape.curves.values()) if (loop) cost += (1 + Math.sin(loop.angle)) * 4;
   if (legs.length === 2) cost += Math.abs(ends.get(legs[0]!.leg)!.y - ends.get(legs[1]!.leg)!.y) * TILT;
+  for (const { leg, vertex } of legs) {
+    const [from, to] = [shape.vertices.get(vertex)!, ends.get(leg)!];
+    cost += Math.hypot(to.x - from.x, to.y - from.y) * LONG + Math.abs(to.y - from.y) * STEEP;
+  }
   return cost;
+}
+
+/**
+ * What makes a turned shape less pleasing: legs that cross or run long, pieces that hang down, a tilt, no mirror. Gives up, with
+ * infinity, as soon as the cost is not below `limit`.
+ */
+export function outerCost(candidate: Candidate, legs: readonly Leg[], limit: number): number {
+  let cost = postureCost(candidate, legs);
+  if (cost >= limit) return Number.POSITIVE_INFINITY;
+  cost += asymmetry(candidate.shape) * CROOKED;
+  if (cost >= limit || legs.length === 0) return cost;
+  return cost + legCost(candidate, legs);
 }
 
 /** A shape with its legs drawn. */

@@ -1,7 +1,7 @@
 import type { Diagram } from '../graph/diagram.ts';
 import type { Theory } from '../graph/theory.ts';
 import { arrowOn, type Curve, crossAt, dotAt, pathOf, pointOn, round } from './geometry.ts';
-import { layout } from './layout.ts';
+import { type Layout, layout } from './layout.ts';
 import type { DrawingDTO, LineStyle, Picture, Side } from './types.ts';
 
 /** How types are drawn and legs are called. */
@@ -29,8 +29,12 @@ function legCurve(from: { x: number; y: number }, end: { x: number; y: number })
 }
 
 /** The drawing of a diagram part by part. Numbers are rounded to a tenth, so equal diagrams give equal text. */
-export function toPicture(diagram: Diagram, theory: Theory, manner: Manner): Picture {
-  const placed = layout(diagram, manner.sides);
+export function toPicture(
+  diagram: Diagram,
+  theory: Theory,
+  manner: Manner,
+  placed: Layout = layout(diagram, manner.sides),
+): Picture {
   return {
     width: Math.ceil(placed.width),
     height: Math.ceil(placed.height),

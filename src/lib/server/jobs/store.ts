@@ -20,8 +20,8 @@ export class JobStore {
   constructor(db: Database) {
     this.#db = db;
     this.#insert = db.$client.prepare(
-      `INSERT INTO diagrams (body_id, position, label, body, loops, symmetry_factor, weight, pairings, order_key, shape, flags)
-       VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
+      `INSERT INTO diagrams (body_id, position, label, body, loops, symmetry_factor, weight, pairings, order_key, shape, flags, picture)
+       VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)`,
     );
   }
 
@@ -69,6 +69,7 @@ export class JobStore {
           row.order,
           row.shape,
           row.flags,
+          row.picture,
         );
     });
     // Nobody is promised a chunk: the log is flushed by the final transaction, which covers all that came before it.
