@@ -2,9 +2,10 @@
  * `npm run bench [name …]`: every measurement of scripts/bench/, one after the other. Each prints ratios taken in one run
  * on one machine; none passes or fails.
  */
+
+import { spawnSync } from 'node:child_process';
 import { readdirSync } from 'node:fs';
 import { join } from 'node:path';
-import { spawnSync } from 'node:child_process';
 import { ensureDependencies, root } from './lib/provision.mjs';
 
 ensureDependencies();

@@ -1,4 +1,4 @@
-import type { DrawingDTO } from '#engine/drawing/types.ts';
+import type { DrawingDTO, Picture } from '#engine/drawing/types.ts';
 import type { ErrorObject } from './errors.ts';
 import type { ExpansionRequest, ModelInput } from './request.ts';
 import type { ConventionRecord, DiagramDTO, EngineStamp, LedgerDTO, RulesDTO, Summary, WorkingDTO } from './result.ts';
@@ -130,11 +130,13 @@ export interface DiagramRow extends DiagramDTO {
   description: string;
 }
 
-export type { DrawingDTO };
+export type { DrawingDTO, Picture };
 
 /** GET /api/v1/expansions/{id}/diagrams/{label} */
 export interface DiagramPageData extends DiagramRow {
   working: WorkingDTO;
+  /** The drawing part by part, so that vertices and lines can be numbered and marked. */
+  picture: Picture;
   rulesUsed: RulesDTO;
   previous: string | null;
   next: string | null;

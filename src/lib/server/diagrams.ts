@@ -7,6 +7,7 @@ import {
   describeDiagram,
   drawingOf,
   type Prepared,
+  pictureOf,
   renderDiagram,
   renderLedger,
   rulesUsed,
@@ -85,6 +86,7 @@ export function getDiagram(viewer: Viewer, id: string, name: string): DiagramPag
   return {
     ...rowOf(prepared, stored),
     working: workingOf(prepared, stored),
+    picture: pictureOf(prepared, stored),
     rulesUsed: rulesUsed(prepared, stored),
     previous: idAt(stored.position - 1),
     next: idAt(stored.position + 1),

@@ -36,9 +36,15 @@ function linesStep(step: Extract<ContractionStep, { is: 'lines' }>, named: Named
   if (step.count > 1) latex.push(`${step.count}!`);
   return {
     text: `${capital(plural(step.count, 'line'))} of ${field} between vertices ${step.from + 1} and ${step.to + 1}: ${from}, ${end}, ${rest}.`,
-    latex: `${latex.join(' \\cdot ') || '1'} = ${step.ways}`,
+    latex: equation(latex, step.ways),
     factor: `${step.ways}`,
   };
+}
+
+/** "6 \\cdot 2! = 12"; a single number stands alone. */
+function equation(factors: readonly string[], value: bigint): string {
+  const product = factors.join(' \\cdot ') || '1';
+  return product === `${value}` ? product : `${product} = ${value}`;
 }
 
 function selfStep(step: Extract<ContractionStep, { is: 'self' }>, named: NamedTheory): WorkingStep {
@@ -49,7 +55,7 @@ function selfStep(step: Extract<ContractionStep, { is: 'self' }>, named: NamedTh
   const latex = [chosen > 1n ? `${chosen}` : '', real ? `(${2 * step.count}-1)!!` : `${step.count}!`].filter(Boolean);
   return {
     text: `${capital(plural(step.count, 'self-contraction'))} of ${half.field} at vertex ${step.vertex + 1}: ${chosen} choice${chosen === 1n ? '' : 's'} of the half-lines, joined in ${how} = ${joined} way${joined === 1n ? '' : 's'}.`,
-    latex: `${latex.join(' \\cdot ')} = ${step.ways}`,
+    latex: equation(latex, step.ways),
     factor: `${step.ways}`,
   };
 }
