@@ -9,7 +9,7 @@ import { runtime } from './runtime.ts';
 import type { Viewer } from './viewer.ts';
 
 /** Milliseconds an estimate may think: the server answers others meanwhile only after it. */
-export const ESTIMATE_MS = 40;
+export const ESTIMATE_MS = 20;
 
 /** Identity of a result: the request without names, and the engine that computed it. */
 export const contentHashOf = (prepared: Prepared): string => sha256(prepared.canonicalKey);
