@@ -5,7 +5,7 @@
 import { spawnSync } from 'node:child_process';
 import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
-import { ensureDependencies, root } from './lib/provision.mjs';
+import { ensureBundle, ensureDependencies, root } from './lib/provision.mjs';
 
 const CHROMIUM = process.env.CHROME ?? '/usr/bin/chromium';
 const report = join(root, '.cache', 'vitest.json');
@@ -44,6 +44,11 @@ const gates = [
   step('format and lint', bin('biome'), ['ci', '.']),
   step('types', bin('astro'), ['check', '--minimumSeverity', 'error']),
 ];
+// Built here, once: test files in processes of their own would otherwise build at the same time.
+const { ensureBuild } = await import('./build.mjs');
+await ensureBuild();
+await ensureBundle('scripts/cli/expand.ts', 'cli/expand.mjs', { inline: true });
+await ensureBundle('scripts/cli/diagram.ts', 'cli/diagram.mjs', { inline: true });
 const only = process.argv.slice(2);
 const testsRan = step('unit, API and browser tests', bin('vitest'), [
   'run',
