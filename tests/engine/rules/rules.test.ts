@@ -110,6 +110,14 @@ describe('the three conventions', () => {
     expect(rules.vertices[0]!.factor).toBe(vertex);
     expect(conventionRecord(conventions)).toMatchObject(conventions);
   });
+  it.each([
+    ['+---', '1/2 (d phi)^2 + b/2 phi (d phi)^2', '-I*b*p1.p2 - I*b*p1.p3 - I*b*p2.p3'],
+    ['-+++', '-1/2 (d phi)^2 + b/2 phi (d phi)^2', '-I*b*p1.p2 - I*b*p1.p3 - I*b*p2.p3'],
+    ['euclidean', '1/2 (d phi)^2 + b/2 phi (d phi)^2', 'b*p1.p2 + b*p1.p3 + b*p2.p3'],
+  ] as const)('derivative vertex in %s: each pair gives −p·p', (signature, lagrangian, factor) => {
+    const model = readModel({ lagrangian, conventions: { signature, dimension: '4' } });
+    expect(modelRules(model).vertices[0]!.factor).toBe(factor);
+  });
   /**
    * Common practice: the propagator inverts the kinetic operator. The quadratic part seen as a vertex, K = i(Z p² − M²) in momentum
    * space, times the propagator i/(Z p² − M²) is i·i = −1: both denominators are the same polynomial.

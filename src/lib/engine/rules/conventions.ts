@@ -38,7 +38,7 @@ export function conventionRecord({ signature, dimension }: Conventions): Convent
     signature,
     dimension,
     ...FIXED[signature],
-    couplings: `A coupling multiplies its term as typed; a vertex factor is ${sign} with respect to its fields, so the factorials of the term live there and not in the weight 1/S.`,
+    couplings: `A coupling multiplies its term as typed; a vertex factor is ${sign} with respect to its fields, so the factorials of the term live there and not in the weight 1/S. All momenta flow in; momentum conservation is not used in vertex factors.`,
     scheme: `Bare perturbation theory in d = ${dimension}: no subtraction, no power of a renormalisation scale inside a coupling.`,
   };
 }
