@@ -56,7 +56,6 @@ function nodesOf(
         open: open && rows.length < plate.count ? () => open(plate.key) : null,
       },
       selectable: false,
-      ariaLabel: `${title}, ${plate.count} diagrams`,
     },
     ...cells.map(({ row, x: left, y: top }) => ({
       id: String(row.position),
@@ -66,7 +65,6 @@ function nodesOf(
       style: { width: cell.width, height: cell.height },
       className: found && !found.has(row.position) ? 'dim' : '',
       data: { row },
-      ariaLabel: `${row.position}   S = ${row.symmetryFactor}`,
     })),
   ]);
 }

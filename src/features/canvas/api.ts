@@ -48,10 +48,3 @@ export async function fetchAll(
 /** The query that picks the members of a plate. */
 export const memberQuery = (by: GroupBy, key: string): Record<string, string> =>
   ({ couplings: { order: key }, loops: { loops: key }, factor: { factor: key }, shape: { shape: key } })[by];
-
-/** The key of a row's plate; couplings need the list's own key, which rows do not carry. */
-export function plateKeyOf(by: GroupBy, row: DiagramRow): string | null {
-  if (by === 'loops') return String(row.loops);
-  if (by === 'factor') return row.symmetryFactor;
-  return by === 'shape' ? row.shape : null;
-}

@@ -1,8 +1,9 @@
 import { useQueries, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import type { DiagramRow, GroupBy } from '#contract/api.ts';
-import { fetchAll, fetchPlates, memberQuery, plateKeyOf } from './api.ts';
+import { fetchAll, fetchPlates, memberQuery } from './api.ts';
 import type { OpenPlate } from './arrange.ts';
+import { sorted } from './sort.ts';
 
 /** Diagrams that are put on the canvas at once; larger lists show their plates first and open on demand. */
 export const AT_ONCE = 500;
@@ -17,16 +18,6 @@ export function useGrowth(): number {
     return () => window.removeEventListener('wickwork:diagrams', grow);
   }, []);
   return growth;
-}
-
-/** Rows of a list that is fetched whole, sorted into their plates. */
-function sorted(by: GroupBy, keys: readonly string[], rows: readonly DiagramRow[]): Map<string, DiagramRow[]> {
-  const groups = new Map<string, DiagramRow[]>(keys.map((key) => [key, []]));
-  for (const row of rows) {
-    const key = plateKeyOf(by, row);
-    if (key !== null) groups.get(key)?.push(row);
-  }
-  return groups;
 }
 
 export interface CanvasData {
@@ -56,26 +47,21 @@ export function useCanvasData(expansion: string, by: GroupBy, count: number, gro
     staleTime: Number.POSITIVE_INFINITY,
     placeholderData: (old) => old,
   });
-  const asked = whole ? (by === 'couplings' ? keys : []) : [...wanted.keys()];
+  const asked = whole ? [] : [...wanted.keys()];
   const members = useQueries({
     queries: asked.map((key) => ({
-      queryKey: ['members', expansion, by, key, whole ? AT_ONCE : wanted.get(key), growth],
+      queryKey: ['members', expansion, by, key, wanted.get(key), growth],
       queryFn: ({ signal }: { signal: AbortSignal }) =>
-        fetchAll(expansion, memberQuery(by, key), whole ? AT_ONCE : (wanted.get(key) ?? STEP), signal),
+        fetchAll(expansion, memberQuery(by, key), wanted.get(key) ?? STEP, signal),
       staleTime: Number.POSITIVE_INFINITY,
-      enabled: !whole,
     })),
   });
   const rowsOf = new Map<string, readonly DiagramRow[]>(
-    whole && list.data && plates.data
-      ? by === 'couplings'
-        ? byCouplings(plates.data.items, list.data)
-        : sorted(by, keys, list.data)
-      : [],
+    whole && list.data && plates.data ? sorted(by, plates.data.items, list.data) : [],
   );
   asked.forEach((key, at) => {
     const rows = members[at]?.data;
-    if (!whole && rows) rowsOf.set(key, rows);
+    if (rows) rowsOf.set(key, rows);
   });
   const error = plates.error ?? list.error ?? members.find((member) => member.error)?.error ?? null;
   return {
@@ -85,29 +71,4 @@ export function useCanvasData(expansion: string, by: GroupBy, count: number, gro
     error: error?.message ?? null,
     open: whole ? null : (key) => setWanted((old) => new Map(old).set(key, (old.get(key) ?? 0) + STEP)),
   };
-}
-
-/** Plates by couplings: members share an order, and a plate's first member says which. */
-function byCouplings(
-  plates: readonly { readonly key: string; readonly first: number }[],
-  rows: readonly DiagramRow[],
-): Map<string, DiagramRow[]> {
-  const kindsOf = (row: DiagramRow): string =>
-    row.vertices
-      .map(({ kind }) => kind)
-      .sort()
-      .join('|');
-  const byKinds = new Map<string, DiagramRow[]>();
-  for (const row of rows) {
-    const known = byKinds.get(kindsOf(row));
-    if (known) known.push(row);
-    else byKinds.set(kindsOf(row), [row]);
-  }
-  const at = new Map(rows.map((row) => [row.position, row]));
-  return new Map(
-    plates.map(({ key, first }) => {
-      const row = at.get(first);
-      return [key, row ? (byKinds.get(kindsOf(row)) ?? []) : []];
-    }),
-  );
 }

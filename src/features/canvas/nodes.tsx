@@ -13,17 +13,24 @@ const joined = (row: DiagramRow, leg: boolean, solid: boolean): string =>
     .map(({ d }) => d)
     .join('');
 
+/** Room for the number under a drawing. */
+export const CAPTION = 20;
+
 export const DiagramNode = memo(function DiagramNode({ data }: NodeProps<DiagramData>) {
   const { row } = data;
   const { width, height, dots } = row.drawing;
   const plain = joined(row, false, true);
   const styled = joined(row, false, false);
+  const tall = height + CAPTION;
   return (
-    <svg className="diagram" width={width} height={height} viewBox={`0 0 ${width} ${height}`} aria-hidden="true">
+    <svg className="diagram" width={width} height={tall} viewBox={`0 0 ${width} ${tall}`} aria-hidden="true">
       <path d={plain} />
       {styled !== '' && <path className="dashed" d={styled} />}
       {row.legs.length > 0 && <path className="leg" d={joined(row, true, true) + joined(row, true, false)} />}
       <path className="dots" d={dots} />
+      <text x={width / 2} y={tall - 5} textAnchor="middle">
+        {`${row.position}\u2002S = ${row.symmetryFactor}`}
+      </text>
     </svg>
   );
 });

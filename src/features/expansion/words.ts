@@ -3,12 +3,13 @@ import type { ExpansionRecord } from '#contract/api.ts';
 export const many = (count: number, one: string, more = `${one}s`): string =>
   `${count.toLocaleString('en-GB')} ${count === 1 ? one : more}`;
 
-/** "3 ms", "1.4 s", "2 min 5 s". */
+/** "3 ms", "1.4 s", "2 min 5 s"; rounded before it is split, so that no part reaches its next unit. */
 export function duration(milliseconds: number): string {
-  if (milliseconds < 1000) return `${Math.max(1, Math.round(milliseconds))} ms`;
-  const seconds = milliseconds / 1000;
-  if (seconds < 60) return `${seconds.toFixed(1)} s`;
-  return `${Math.floor(seconds / 60)} min ${Math.round(seconds % 60)} s`;
+  const whole = Math.max(1, Math.round(milliseconds));
+  if (whole < 1000) return `${whole} ms`;
+  if (whole < 59_950) return `${(whole / 1000).toFixed(1)} s`;
+  const seconds = Math.round(whole / 1000);
+  return `${Math.floor(seconds / 60)} min ${seconds % 60} s`;
 }
 
 const PROOF = {
