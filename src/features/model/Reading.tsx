@@ -10,7 +10,8 @@ export function Reading({ preview, failed }: { readonly preview: ModelPreview; r
         <b>{preview.ok ? 'As read' : 'As far as it could be read'}</b>
         {preview.latex !== '' && <Copy text={preview.normalLatex || preview.latex} what="the Lagrangian" />}
       </div>
-      <div className="plate-body reading scroll-x">
+      {/* biome-ignore lint/a11y/noNoninteractiveTabindex: keys scroll a wide formula only when it takes the focus */}
+      <div className="plate-body reading scroll-x" tabIndex={0}>
         {preview.mathml === '' ? (
           <p className="quiet">The Lagrangian appears here, typeset, as you type.</p>
         ) : (
