@@ -30,8 +30,8 @@ const SHEETS: Record<string, object> = {
   'charged-four-point': { lagrangian: CHARGED, legs: ['phi', 'phi', 'phi^*', 'phi^*'], order: { g: 2 } },
 };
 
-const STYLE = `body{font:13px Inter,sans-serif;margin:16px;background:#faf8f3;color:#1c2733}main{display:grid;grid-template-columns:repeat(auto-fill,minmax(170px,1fr))}
-figure{margin:0;padding:8px;border:1px solid #dcd6ca;text-align:center}path{fill:none;stroke:#1c2733;stroke-width:1.6}.leg{stroke:#b93a25}.dashed{stroke-dasharray:5 3.5}
+const STYLE = `body{font:13px Inter,sans-serif;margin:16px;background:#faf8f3;color:#1c2733}main{display:flex;flex-wrap:wrap;align-items:stretch}
+figure{margin:0;padding:8px;min-width:150px;border:1px solid #dcd6ca;text-align:center}path{fill:none;stroke:#1c2733;stroke-width:1.6}.leg{stroke:#b93a25}.dashed{stroke-dasharray:5 3.5}
 .dotted{stroke-dasharray:.1 4;stroke-linecap:round}.dashdot{stroke-dasharray:7 3 .1 3;stroke-linecap:round}.dots{fill:#1c2733;stroke:none}text{font:12px serif;fill:#51606f}`;
 
 function sheet(name: string, request: object): void {

@@ -13,7 +13,7 @@ export interface Manner {
   readonly sides?: readonly Side[] | undefined;
 }
 
-const DOT = 2.6;
+const DOT = 3.2;
 const CROSS = 4;
 const LABEL_GAP = 5;
 /** From the middle of a letter to its baseline. */
