@@ -5,7 +5,8 @@
 import { addresses, freshContext, launch } from './lib/browser.mjs';
 
 const { base, paths } = addresses('Usage: node scripts/measure/weight.mjs http://localhost:4321 /expansions/…');
-const VIEWS = ['Canvas', 'Table'];
+/** Buttons of a result page, with what stands there once their view has come. */
+const VIEWS = { Canvas: '.canvas[data-ready="true"]', Table: '.grid-body tr' };
 
 /** Encoded bytes of all scripts so far, modules fetched on demand included. */
 const scriptBytes = (page) =>
@@ -25,11 +26,11 @@ async function weigh(browser, path) {
   await page.setViewportSize({ width: 600, height: 800 });
   await page.goto(base + path, { waitUntil: 'networkidle' });
   const parts = [`page ${kib(await scriptBytes(page))}`];
-  for (const view of VIEWS) {
+  for (const [view, shown] of Object.entries(VIEWS)) {
     const button = page.getByRole('button', { name: view, exact: true });
     if ((await button.count()) === 0) continue;
     await button.click();
-    await page.waitForLoadState('networkidle');
+    await page.locator(shown).first().waitFor();
     parts.push(`with ${view.toLowerCase()} ${kib(await scriptBytes(page))}`);
   }
   await context.close();

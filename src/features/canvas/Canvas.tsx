@@ -24,6 +24,11 @@ const DIRECTIONS: Readonly<Record<string, 'left' | 'right' | 'up' | 'down'>> = {
   ArrowDown: 'down',
 };
 
+/** An overview helps only where not everything is in sight at first; on a small sheet it would cover diagrams. */
+const OVERVIEW_FROM = 40;
+/** Diagrams whose legs carry numbers; with more, the time of a frame counts, and the sheet is seen from too far to read them. */
+const NUMBERED_UP_TO = 150;
+
 const addressOf = (expansion: string, { id }: DiagramRow): string => `/expansions/${expansion}/diagrams/${id}`;
 
 /** A plate's title with Greek letters and raised powers: "lambda^2 rho" → "λ² ρ". */
@@ -42,6 +47,7 @@ function nodesOf(
   open: ((key: string) => void) | null,
 ): Node[] {
   const { cell } = arrangement;
+  const numbered = arrangement.plates.reduce((sum, { rows }) => sum + rows.length, 0) <= NUMBERED_UP_TO;
   return arrangement.plates.flatMap(({ plate, rows, title, x, y, width, height, cells }) => [
     {
       id: `plate ${plate.key}`,
@@ -64,7 +70,7 @@ function nodesOf(
       position: { x: left, y: top },
       style: { width: cell.width, height: cell.height },
       className: found && !found.has(row.position) ? 'dim' : '',
-      data: { row },
+      data: { row, numbered },
     })),
   ]);
 }
@@ -181,7 +187,7 @@ function Sheet({ expansion, by, count, growth, found }: Props) {
           }}
         >
           <Background gap={28} size={1} />
-          <MiniMap pannable zoomable nodeStrokeWidth={2} ariaLabel="Overview" />
+          {nodes.length > OVERVIEW_FROM && <MiniMap pannable zoomable nodeStrokeWidth={2} ariaLabel="Overview" />}
           <Controls showInteractive={false} />
         </ReactFlow>
         {pending && <p className="loading canvas-loading">Drawing</p>}

@@ -4,6 +4,8 @@ import type { DiagramRow } from '#contract/api.ts';
 
 export interface DiagramData {
   readonly row: DiagramRow;
+  /** Whether legs carry their numbers: one element more in each node, left out of large sheets. */
+  readonly numbered: boolean;
 }
 
 /** All strokes of one manner as one path: a node keeps to a handful of elements, so that hundreds of them pan smoothly. */
@@ -16,11 +18,33 @@ const joined = (row: DiagramRow, leg: boolean, solid: boolean): string =>
 /** Room for the number under a drawing. */
 export const CAPTION = 20;
 
+/**
+ * The numbers of the legs as one text element, a place for each character; null without legs, or with more than nine.
+ * Channels of equal legs differ by nothing else.
+ */
+export function legNumbers({ legs, drawing }: DiagramRow): { text: string; x: string; y: string } | null {
+  if (legs.length === 0 || legs.length > 9) return null;
+  const places = drawing.labels.map(({ x, y, text, anchor }) => ({
+    digit: SUBSCRIPTS.indexOf(text.at(-1) ?? ''),
+    x: anchor === 'end' ? x - DIGIT_WIDTH : x,
+    y,
+  }));
+  if (places.some(({ digit }) => digit < 0)) return null;
+  return {
+    text: places.map(({ digit }) => digit).join(''),
+    x: places.map(({ x }) => x).join(' '),
+    y: places.map(({ y }) => y).join(' '),
+  };
+}
+const SUBSCRIPTS = '₀₁₂₃₄₅₆₇₈₉';
+const DIGIT_WIDTH = 7;
+
 export const DiagramNode = memo(function DiagramNode({ data }: NodeProps<DiagramData>) {
-  const { row } = data;
+  const { row, numbered } = data;
   const { width, height, dots } = row.drawing;
   const plain = joined(row, false, true);
   const styled = joined(row, false, false);
+  const numbers = numbered ? legNumbers(row) : null;
   const tall = height + CAPTION;
   return (
     <svg className="diagram" width={width} height={tall} viewBox={`0 0 ${width} ${tall}`} aria-hidden="true">
@@ -28,6 +52,11 @@ export const DiagramNode = memo(function DiagramNode({ data }: NodeProps<Diagram
       {styled !== '' && <path className="dashed" d={styled} />}
       {row.legs.length > 0 && <path className="leg" d={joined(row, true, true) + joined(row, true, false)} />}
       <path className="dots" d={dots} />
+      {numbers && (
+        <text x={numbers.x} y={numbers.y}>
+          {numbers.text}
+        </text>
+      )}
       <text x={width / 2} y={tall - 5} textAnchor="middle">
         {`${row.position}\u2002S = ${row.symmetryFactor}`}
       </text>

@@ -27,4 +27,5 @@ export { type RunEnd, runExpansion, type SummaryBody } from './answer/run.ts';
 export { ENGINE, ENGINE_VERSION } from './answer/version.ts';
 export { working, workingOf } from './answer/working.ts';
 export type { DrawingDTO, Picture } from './drawing/types.ts';
+export { svgOf } from './export/svg.ts';
 export type { Model, VertexKind } from './lagrangian/model.ts';

@@ -3,6 +3,7 @@ import { describe, expect, it } from 'vitest';
 import type { DiagramRow, Plate } from '#contract/api.ts';
 import { memberQuery } from '#features/canvas/api.ts';
 import { arrange, neighbour, type OpenPlate } from '#features/canvas/arrange.ts';
+import { legNumbers } from '#features/canvas/nodes.tsx';
 import { sorted } from '#features/canvas/sort.ts';
 
 const row = (position: number, change: Partial<DiagramRow> = {}): DiagramRow => ({
@@ -120,6 +121,27 @@ describe('laying plates out', () => {
       'Plate IV',
     ]);
     expect(arrange(sheets(Array(90).fill(1))).plates.at(-1)!.title).toBe('No. 90');
+  });
+});
+
+describe('numbers of legs', () => {
+  const labels = (...texts: string[]) =>
+    row(1, {
+      legs: texts.map((_, at) => ({ id: at + 1, field: 'h', vertex: 1 })),
+      drawing: {
+        ...row(1).drawing,
+        labels: texts.map((text, at) => ({ x: 20 + at, y: 10, text, anchor: at === 0 ? 'end' : 'start' })),
+      },
+    });
+
+  it('stand each at its own leg, left of it on the left side', () => {
+    expect(legNumbers(labels('h₁', 'φ*₂'))).toEqual({ text: '12', x: '13 21', y: '10 10' });
+  });
+
+  it('are left out without legs, and where one character is not enough', () => {
+    expect(legNumbers(labels())).toBeNull();
+    expect(legNumbers(labels(...Array(10).fill('h₁')))).toBeNull();
+    expect(legNumbers(labels('h'))).toBeNull();
   });
 });
 
