@@ -1,9 +1,10 @@
 import type { Diagram } from '../graph/diagram.ts';
 import { type Component, componentsOf } from './blocks.ts';
 import { type Curve, round } from './geometry.ts';
+import { type Candidate, Judge } from './judge.ts';
 import type { Leg } from './legs.ts';
-import { type Body, bodiesOf, shapeOf, turnedShape } from './place.ts';
-import { boundsOf, type Candidate, innerCost, outerCost, withLegs } from './score.ts';
+import { type Body, bodiesOf, shapeOf } from './place.ts';
+import { boundsOf, innerCost } from './score.ts';
 import type { Point, Side } from './types.ts';
 
 /** Coordinates of a whole diagram, origin at the top left corner. */
@@ -55,24 +56,27 @@ function best(component: Component, diagram: Diagram, legs: readonly Leg[]): Can
     .map((shape) => ({ shape, inner: innerCost(shape) }))
     .sort((a, b) => a.inner - b.inner)
     .slice(0, BODIES);
-  let chosen: Candidate | null = null;
+  let chosen: { judge: Judge; angle: number; mirrored: boolean; lean: number } | null = null;
   let least = Number.POSITIVE_INFINITY;
   for (const { shape, inner } of shapes) {
     if (inner > shapes[0]!.inner + 1) break;
+    const judge = new Judge(shape, legs);
     for (const mirrored of [false, true])
       for (let turn = 0; turn < TURNS; turn++) {
-        const turned = turnedShape(shape, (2 * Math.PI * turn) / TURNS, mirrored);
+        const angle = (2 * Math.PI * turn) / TURNS;
+        judge.turn(angle, mirrored);
         for (const lean of leansOf(legs)) {
-          const candidate = withLegs(turned, legs, lean);
-          const cost = inner + outerCost(candidate, legs, least - inner);
+          const cost = inner + judge.cost(lean, least - inner);
           if (cost < least - 1e-6) {
             least = cost;
-            chosen = candidate;
+            chosen = { judge, angle, mirrored, lean };
           }
         }
       }
   }
-  return chosen!;
+  const { judge, angle, mirrored, lean } = chosen!;
+  judge.turn(angle, mirrored);
+  return judge.candidate(lean);
 }
 
 interface Piece {
