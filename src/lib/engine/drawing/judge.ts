@@ -98,7 +98,7 @@ export class Judge {
     if (this.legs.length > 0) this.#columns.place(this.#heightOf, this.#middle, this.#bounds, lean);
     let cost = this.#posture();
     if (cost >= limit) return Number.POSITIVE_INFINITY;
-    cost += this.#asymmetry() * CROOKED;
+    cost += this.#asymmetry((limit - cost) / CROOKED) * CROOKED;
     if (cost >= limit || this.legs.length === 0) return cost;
     return cost + this.#legs();
   }
@@ -148,7 +148,7 @@ export class Judge {
   }
 
   /** How far, on average, vertices and middles of lines are from where a mirror would have them; the better of both axes. */
-  #asymmetry(): number {
+  #asymmetry(most: number): number {
     const [xs, ys] = [this.#mirrorX, this.#mirrorY];
     const vertices = this.#starts[0]!;
     for (let i = 0; i < vertices; i++) {
@@ -168,7 +168,8 @@ export class Judge {
       top = Math.min(top, ys[i]!);
       bottom = Math.max(bottom, ys[i]!);
     }
-    return Math.min(off(xs, ys, left + right, null), off(xs, ys, null, top + bottom));
+    const upright = off(xs, ys, left + right, null, most);
+    return Math.min(upright, off(xs, ys, null, top + bottom, Math.min(most, upright)));
   }
 
   #legs(): number {
@@ -191,8 +192,8 @@ export class Judge {
   }
 }
 
-/** Mean distance of points from the set's own mirror image: x + x′ = sumX, or y + y′ = sumY. */
-function off(xs: Float64Array, ys: Float64Array, sumX: number | null, sumY: number | null): number {
+/** Mean distance of points from the set's own mirror image, x + x′ = sumX or y + y′ = sumY; infinite as soon as it is above `most`. */
+function off(xs: Float64Array, ys: Float64Array, sumX: number | null, sumY: number | null, most: number): number {
   let total = 0;
   for (let i = 0; i < xs.length; i++) {
     const x = sumX === null ? xs[i]! : sumX - xs[i]!;
@@ -203,6 +204,7 @@ function off(xs: Float64Array, ys: Float64Array, sumX: number | null, sumY: numb
       if (away < least) least = away;
     }
     total += least;
+    if (total > most * xs.length) return Number.POSITIVE_INFINITY;
   }
   return total / xs.length;
 }

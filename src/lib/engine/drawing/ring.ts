@@ -21,13 +21,14 @@ type Joins = (a: number, b: number) => number;
 
 /** Lines between two vertices of a block. */
 export function joinsOf(block: Block, { lines }: Diagram): Joins {
-  const counts = new Map<string, number>();
+  const size = 1 + Math.max(...block.vertices);
+  const counts = new Uint8Array(size * size);
   for (const line of block.lines) {
     const { from, to } = lines[line]!;
-    const key = from < to ? `${from},${to}` : `${to},${from}`;
-    counts.set(key, (counts.get(key) ?? 0) + 1);
+    counts[from * size + to]!++;
+    counts[to * size + from]!++;
   }
-  return (a, b) => counts.get(a < b ? `${a},${b}` : `${b},${a}`) ?? 0;
+  return (a, b) => counts[a * size + b]!;
 }
 
 /** Chords that cross, neighbours that no line joins, and unlike multiplicities at mirrored places. */
@@ -59,19 +60,35 @@ function asymmetry(order: readonly number[], joins: Joins): number {
   return 1;
 }
 
-function* permutations(items: readonly number[]): Generator<number[]> {
-  if (items.length < 2) {
-    yield [...items];
-    return;
-  }
-  for (let i = 0; i < items.length; i++)
-    for (const rest of permutations([...items.slice(0, i), ...items.slice(i + 1)])) yield [items[i]!, ...rest];
+/** Every order of the items, in lexicographic order of their places; the list handed over is used again. */
+function eachOrder(items: readonly number[], look: (order: readonly number[]) => void): void {
+  const order: number[] = [];
+  const used = items.map(() => false);
+  const choose = (): void => {
+    if (order.length === items.length) {
+      look(order);
+      return;
+    }
+    for (let i = 0; i < items.length; i++) {
+      if (used[i]) continue;
+      used[i] = true;
+      order.push(items[i]!);
+      choose();
+      order.pop();
+      used[i] = false;
+    }
+  };
+  choose();
 }
 
 /** All orders around a circle up to rotation and reflection. */
-function* circular(vertices: readonly number[]): Generator<number[]> {
+function circular(vertices: readonly number[]): number[][] {
   const [first, ...rest] = vertices;
-  for (const order of permutations(rest)) if (order.length < 2 || order[0]! < order.at(-1)!) yield [first!, ...order];
+  const found: number[][] = [];
+  eachOrder(rest, (order) => {
+    if (order.length < 2 || order[0]! < order.at(-1)!) found.push([first!, ...order]);
+  });
+  return found;
 }
 
 /** From a first order, exchanges and reversals of stretches as long as they help. */
@@ -112,7 +129,7 @@ function greedy(vertices: readonly number[], joins: Joins, start: number): numbe
 function ringsOf(vertices: readonly number[], joins: Joins): { order: number[]; cost: number }[] {
   const orders =
     vertices.length <= EXHAUSTIVE
-      ? [...circular(vertices)]
+      ? circular(vertices)
       : vertices.slice(0, 4).map((start) => improved(greedy(vertices, joins, start), joins));
   return orders.map((order) => ({ order, cost: costOf(order, joins) }));
 }
