@@ -61,7 +61,7 @@ describe('the canvas', () => {
     const elements = await page
       .locator('.react-flow__node-diagram')
       .evaluateAll((nodes) => nodes.map((node) => node.querySelectorAll('*').length));
-    expect(Math.max(...elements)).toBeLessThanOrEqual(7);
+    expect(Math.max(...elements)).toBeLessThanOrEqual(8);
   });
 
   it('is walked by arrow keys and opened by Enter', async () => {

@@ -91,6 +91,9 @@ function Sheet({ expansion, by, count, growth, found }: Props) {
   const [menu, setMenu] = useState<MenuAt | null>(null);
   const flow = useReactFlow();
   const frame = useRef<HTMLDivElement>(null);
+  // The view is fitted when the sheet first appears: it appears when its diagrams are there.
+  const loaded = useRef(false);
+  if (!pending) loaded.current = true;
   const rows = useMemo(
     () => new Map(plates.flatMap((plate) => plate.rows.map((row) => [row.position, row]))),
     [plates],
@@ -160,36 +163,38 @@ function Sheet({ expansion, by, count, growth, found }: Props) {
         onKeyDown={onKeyDown}
         data-ready={!pending}
       >
-        <ReactFlow
-          nodes={shown}
-          edges={[]}
-          nodeTypes={nodeTypes}
-          nodesDraggable={false}
-          nodesConnectable={false}
-          nodesFocusable={false}
-          edgesFocusable={false}
-          disableKeyboardA11y
-          fitView
-          fitViewOptions={{ maxZoom: 1, padding: 0.04 }}
-          minZoom={0.05}
-          maxZoom={3}
-          proOptions={{ hideAttribution: true }}
-          onNodeClick={(_, node) => node.type === 'diagram' && setAt(Number(node.id))}
-          onNodeDoubleClick={(_, node) => {
-            const row = rows.get(Number(node.id));
-            if (row) show(row);
-          }}
-          onNodeContextMenu={onContext}
-          onPaneClick={() => setMenu(null)}
-          onSelectionChange={({ nodes: chosen }) => {
-            const ids = chosen.filter((node) => node.type === 'diagram').map((node) => node.id);
-            if (ids.length > 1) setSelected(ids);
-          }}
-        >
-          <Background gap={28} size={1} />
-          {nodes.length > OVERVIEW_FROM && <MiniMap pannable zoomable nodeStrokeWidth={2} ariaLabel="Overview" />}
-          <Controls showInteractive={false} />
-        </ReactFlow>
+        {loaded.current && (
+          <ReactFlow
+            nodes={shown}
+            edges={[]}
+            nodeTypes={nodeTypes}
+            nodesDraggable={false}
+            nodesConnectable={false}
+            nodesFocusable={false}
+            edgesFocusable={false}
+            disableKeyboardA11y
+            fitView
+            fitViewOptions={{ maxZoom: 1, padding: 0.04 }}
+            minZoom={0.05}
+            maxZoom={3}
+            proOptions={{ hideAttribution: true }}
+            onNodeClick={(_, node) => node.type === 'diagram' && setAt(Number(node.id))}
+            onNodeDoubleClick={(_, node) => {
+              const row = rows.get(Number(node.id));
+              if (row) show(row);
+            }}
+            onNodeContextMenu={onContext}
+            onPaneClick={() => setMenu(null)}
+            onSelectionChange={({ nodes: chosen }) => {
+              const ids = chosen.filter((node) => node.type === 'diagram').map((node) => node.id);
+              if (ids.length > 1) setSelected(ids);
+            }}
+          >
+            <Background gap={28} size={1} />
+            {nodes.length > OVERVIEW_FROM && <MiniMap pannable zoomable nodeStrokeWidth={2} ariaLabel="Overview" />}
+            <Controls showInteractive={false} />
+          </ReactFlow>
+        )}
         {pending && <p className="loading canvas-loading">Drawing</p>}
         {menu && <Menu {...menu} close={() => setMenu(null)} />}
       </div>

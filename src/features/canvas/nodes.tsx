@@ -44,13 +44,16 @@ export const DiagramNode = memo(function DiagramNode({ data }: NodeProps<Diagram
   const { width, height, dots } = row.drawing;
   const plain = joined(row, false, true);
   const styled = joined(row, false, false);
+  const legs = joined(row, true, true);
+  const styledLegs = joined(row, true, false);
   const numbers = numbered ? legNumbers(row) : null;
   const tall = height + CAPTION;
   return (
     <svg className="diagram" width={width} height={tall} viewBox={`0 0 ${width} ${tall}`} aria-hidden="true">
       <path d={plain} />
       {styled !== '' && <path className="dashed" d={styled} />}
-      {row.legs.length > 0 && <path className="leg" d={joined(row, true, true) + joined(row, true, false)} />}
+      {legs !== '' && <path className="leg" d={legs} />}
+      {styledLegs !== '' && <path className="leg dashed" d={styledLegs} />}
       <path className="dots" d={dots} />
       {numbers && (
         <text x={numbers.x} y={numbers.y}>
