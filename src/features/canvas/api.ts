@@ -16,7 +16,7 @@ export interface Plates {
 export const fetchPlates = (expansion: string, by: GroupBy, signal?: AbortSignal): Promise<Plates> =>
   read(`/expansions/${expansion}/plates?by=${by}`, signal);
 
-const PAGE = 200;
+const PAGE = 500;
 
 /** One page of the list. */
 export function fetchDiagrams(

@@ -13,7 +13,7 @@ const yesNo = z.enum(['true', 'false']).transform((value) => value === 'true');
 /** The query string of a diagram list, checked. Unknown keys are errors. */
 export const diagramQuerySchema = z.strictObject({
   after: z.string().max(400).optional(),
-  limit: z.coerce.number().int().min(1).max(200).default(100),
+  limit: z.coerce.number().int().min(1).max(500).default(100),
   sort: z.enum(SORTS).default('position'),
   find: z.string().max(200).optional(),
   loops: z.coerce.number().int().min(0).max(100).optional(),

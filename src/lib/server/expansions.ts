@@ -129,6 +129,23 @@ export function subscribe(viewer: Viewer, id: string, listener: (event: Expansio
   return runtime().jobs.subscribe(row.bodyId, listener);
 }
 
+/** Waits until a computation has ended, but no longer than this: short ones are then shown whole at once. */
+export async function settled(viewer: Viewer, id: string, milliseconds: number): Promise<void> {
+  await new Promise<void>((done) => {
+    const timer = setTimeout(done, milliseconds);
+    const stop = subscribe(viewer, id, (event) => {
+      if (event.type !== 'state' || event.state === 'queued' || event.state === 'running') return;
+      clearTimeout(timer);
+      done();
+    });
+    if (!stop) {
+      clearTimeout(timer);
+      done();
+    }
+    setTimeout(() => stop?.(), milliseconds);
+  });
+}
+
 /** Removes what visitors left behind and bodies nobody uses. Runs at start and every hour. */
 export function removeExpired(): void {
   const { db } = runtime();
