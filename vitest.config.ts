@@ -7,7 +7,12 @@ export default defineConfig({
       {
         test: {
           name: 'unit',
-          include: ['tests/*.test.ts', 'tests/engine/**/*.test.ts', 'tests/features/**/*.test.{ts,tsx}'],
+          include: [
+            'tests/*.test.ts',
+            'tests/engine/**/*.test.ts',
+            'tests/features/**/*.test.{ts,tsx}',
+            'tests/contract/**/*.test.ts',
+          ],
           testTimeout: 60_000,
         },
       },

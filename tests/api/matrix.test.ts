@@ -105,6 +105,7 @@ const CASES: Case[] = [
   },
   { route: '[...rest]', method: 'GET', path: '/nothing-here', expect: everybody(404) },
   { route: 'openapi.json', method: 'GET', path: '/openapi.json', expect: everybody(200) },
+  { route: 'schema.json', method: 'GET', path: '/schema.json', expect: everybody(200) },
   {
     route: 'expansions/[id]/index',
     method: 'DELETE',
