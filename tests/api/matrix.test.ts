@@ -56,6 +56,13 @@ const CASES: Case[] = [
   { route: 'expansions/estimate', method: 'POST', path: '/expansions/estimate', body: asked, expect: everybody(200) },
   { route: 'expansions/[id]/index', method: 'GET', path: '/expansions/EXPANSION', expect: members(200) },
   {
+    route: 'expansions/[id]/cancel',
+    method: 'POST',
+    path: '/expansions/EXPANSION/cancel',
+    body: {},
+    expect: authors(409),
+  },
+  {
     route: 'expansions/[id]/retry',
     method: 'POST',
     path: '/expansions/EXPANSION/retry',

@@ -47,6 +47,9 @@ const PATHS: Record<string, Partial<Record<Method, Operation>>> = {
     get: { summary: 'One expansion with its summary and ledger', status: 200 },
     delete: { summary: 'End a computation (200), or remove an expansion that has ended (204)', status: 200 },
   },
+  '/expansions/{id}/cancel': {
+    post: { summary: 'End a computation under way; 409 when it has ended', status: 200 },
+  },
   '/expansions/{id}/retry': {
     post: { summary: 'Start a failed, cancelled or interrupted expansion again', status: 202 },
   },
