@@ -30,7 +30,7 @@ const LEAST_WIDTH = 230;
 /** Width over height of a plate that is filled evenly. */
 const ASPECT = 1.6;
 /** Rows of plates are about this many times as wide as the whole is high. */
-const SHEET_ASPECT = 1.8;
+const SHEET_ASPECT = 2.6;
 const LAST_NUMERAL = 89;
 
 function cellOf(plates: readonly OpenPlate[]): { width: number; height: number } {
