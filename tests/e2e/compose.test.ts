@@ -157,7 +157,7 @@ describe('without JavaScript', () => {
 
 describe('computations', () => {
   it('run in sight, are cancelled, and start again', async () => {
-    const page = await stage.openAs('lead', typed('legs=h+h&by=loops&loops=2&keep=1PI&title=test+job:+slow'));
+    const page = await stage.openAs('lead', typed('legs=h+h&by=loops&loops=4&keep=1PI&title=test+job:+slow'));
     await alive(page);
     await page.getByRole('button', { name: 'Expand' }).click();
     await page.waitForURL(MADE);
