@@ -1,5 +1,6 @@
 import { z } from 'zod';
-import type { ExpansionResult, LedgerDTO, RulesDTO, WorkingDTO } from './result.ts';
+import { type AnyCode, type ErrorObject, STATUS } from './errors.ts';
+import type { DiagramAnswer, ExpansionResult } from './result.ts';
 
 /**
  * The result contract as schemas: what the command line prints, the API answers and downloads hold. Served as JSON Schema; the
@@ -88,7 +89,7 @@ const diagramShape = {
       id: z.number().int(),
       field: z.string(),
       vertex: z.number().int().nullable(),
-      joinedTo: z.number().int().optional(),
+      joinedTo: z.number().int().exactOptional(),
     }),
   ),
   lines: z.array(z.strictObject({ from: z.number().int(), to: z.number().int(), field: z.string() })),
@@ -129,25 +130,31 @@ export const workingSchema = z.strictObject({
 
 export const diagramAnswerSchema = z.strictObject({ ...diagramShape, working: workingSchema });
 
+export const engineStampSchema = z.strictObject({ name: z.literal('Wickwork'), version: z.string() });
+
 export const expansionResultSchema = z.strictObject({
   summary: summarySchema,
   ledger: ledgerSchema,
   rules: rulesSchema,
   conventions: conventionRecordSchema,
-  engine: z.strictObject({ name: z.literal('Wickwork'), version: z.string() }),
+  engine: engineStampSchema,
   diagrams: z.array(diagramSchema),
 });
 
-/** Fails to compile when a schema and its type part ways, in either direction. */
+/** Why something was refused: on standard error of the command line as `{ error }`, over HTTP inside a problem document. */
+export const errorSchema = z.strictObject({
+  code: z.enum(Object.keys(STATUS) as [AnyCode, ...AnyCode[]]),
+  message: z.string(),
+  line: z.number().int().min(1).nullable(),
+  column: z.number().int().min(1).nullable(),
+  length: z.number().int().min(0).exactOptional(),
+  suggestion: z.string().exactOptional(),
+  fields: z.record(z.string(), z.string()).exactOptional(),
+});
+
+/** Fails to compile when a schema and its type part ways, in either direction; the result holds all parts but the working. */
 type Same<Schema extends z.ZodType, Type> =
   z.output<Schema> extends Type ? (Type extends z.input<Schema> ? true : never) : never;
-const _checked: [
-  Same<typeof ledgerSchema, LedgerDTO>,
-  Same<typeof rulesSchema, RulesDTO>,
-  Same<typeof workingSchema, WorkingDTO>,
-  Same<
-    typeof expansionResultSchema,
-    Omit<ExpansionResult, 'diagrams'> & { diagrams: z.output<typeof diagramSchema>[] }
-  >,
-] = [true, true, true, true];
-void _checked;
+true satisfies Same<typeof expansionResultSchema, ExpansionResult>;
+true satisfies Same<typeof diagramAnswerSchema, DiagramAnswer>;
+true satisfies Same<typeof errorSchema, ErrorObject>;

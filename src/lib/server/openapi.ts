@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { diagramRequestSchema, expansionRequestSchema, modelSchema } from '#contract/request.ts';
+import { diagramAnswerSchema, errorSchema, ledgerSchema } from '#contract/resultSchema.ts';
 import { diagramQuerySchema } from './diagram-query.ts';
 import { changeModelBody, expansionsQuery, newExpansionBody, newModelBody, pageQuery, platesQuery } from './schemas.ts';
 
@@ -10,7 +11,23 @@ interface Operation {
   status: number;
   /** Media type of the answer, where it is not JSON. */
   type?: string;
+  /** Schema of a JSON answer, by its name under components. */
+  answer?: keyof typeof COMPONENTS;
 }
+
+/** Answers that are the result contract itself; wrong and extra keys are excluded here too. */
+const COMPONENTS = {
+  DiagramAnswer: diagramAnswerSchema,
+  Ledger: ledgerSchema,
+  Problem: z.strictObject({
+    type: z.string(),
+    title: z.string(),
+    status: z.number().int(),
+    detail: z.string(),
+    instance: z.string().exactOptional(),
+    error: errorSchema,
+  }),
+} as const;
 
 type Method = 'get' | 'post' | 'put' | 'delete';
 
@@ -59,22 +76,35 @@ const PATHS: Record<string, Partial<Record<Method, Operation>>> = {
   '/expansions/{id}/diagrams/{label}': {
     get: { summary: 'One diagram by label or position, with its working', status: 200 },
   },
+  '/expansions/{id}/diagrams/{label}.svg': {
+    get: { summary: 'The drawing of one diagram as a file', status: 200, type: 'image/svg+xml' },
+  },
   '/expansions/{id}/plates': { get: { summary: 'Groups of its diagrams', query: platesQuery, status: 200 } },
-  '/expansions/{id}/ledger': { get: { summary: 'The proof that the list is complete', status: 200 } },
+  '/expansions/{id}/ledger': {
+    get: { summary: 'The proof that the list is complete', status: 200, answer: 'Ledger' },
+  },
   '/expansions/{id}/events': {
     get: { summary: 'Progress and state as server-sent events', status: 200, type: 'text/event-stream' },
   },
   '/expansions/{id}/download.json': { get: { summary: 'The whole result as JSON', status: 200 } },
   '/expansions/{id}/download.csv': { get: { summary: 'The whole result as CSV', status: 200, type: 'text/csv' } },
   '/diagram': {
-    post: { summary: 'One diagram made elsewhere: label, factor, working', body: diagramRequestSchema, status: 200 },
+    post: {
+      summary: 'One diagram made elsewhere: label, factor, working',
+      body: diagramRequestSchema,
+      status: 200,
+      answer: 'DiagramAnswer',
+    },
   },
+  '/schema.json': { get: { summary: 'Requests and results as JSON Schema', status: 200 } },
 };
 
 const schemaOf = (schema: z.ZodType): object => {
   const { $schema: _, ...rest } = z.toJSONSchema(schema, { io: 'input', unrepresentable: 'any' });
   return rest;
 };
+
+const reference = (name: keyof typeof COMPONENTS): object => ({ schema: { $ref: `#/components/schemas/${name}` } });
 
 function queryParameters(schema: z.ZodObject | undefined): object[] {
   if (!schema) return [];
@@ -86,14 +116,14 @@ function queryParameters(schema: z.ZodObject | undefined): object[] {
   }));
 }
 
-function operation(path: string, { summary, body, query, status, type }: Operation): object {
+function operation(path: string, { summary, body, query, status, type, answer }: Operation): object {
   const inPath = [...path.matchAll(/\{(\w+)\}/g)].map((match) => ({
     name: match[1],
     in: 'path',
     required: true,
     schema: { type: 'string' },
   }));
-  const content = { [type ?? 'application/json']: {} };
+  const content = { [type ?? 'application/json']: answer ? reference(answer) : {} };
   return {
     summary,
     parameters: [...inPath, ...queryParameters(query)],
@@ -102,7 +132,7 @@ function operation(path: string, { summary, body, query, status, type }: Operati
       [status]: { description: 'Done', ...(status === 204 ? {} : { content }) },
       default: {
         description: 'Refused: problem+json whose member "error" is { code, message, line, column }',
-        content: { 'application/problem+json': {} },
+        content: { 'application/problem+json': reference('Problem') },
       },
     },
   };
@@ -122,6 +152,9 @@ export function openApi(): object {
         Object.fromEntries(Object.entries(operations).map(([method, value]) => [method, operation(path, value)])),
       ]),
     ),
+    components: {
+      schemas: Object.fromEntries(Object.entries(COMPONENTS).map(([name, schema]) => [name, schemaOf(schema)])),
+    },
   };
   return made;
 }

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { diagramRequestSchema, expansionRequestSchema } from '#contract/request.ts';
-import { diagramAnswerSchema, expansionResultSchema } from '#contract/resultSchema.ts';
+import { diagramAnswerSchema, errorSchema, expansionResultSchema } from '#contract/resultSchema.ts';
 
 let made: object | null = null;
 
@@ -16,6 +16,7 @@ export function contractSchema(): object {
       DiagramRequest: input(diagramRequestSchema),
       ExpansionResult: z.toJSONSchema(expansionResultSchema),
       DiagramAnswer: z.toJSONSchema(diagramAnswerSchema),
+      Error: z.toJSONSchema(errorSchema),
     },
   };
   return made;
