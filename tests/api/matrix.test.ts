@@ -81,6 +81,12 @@ const CASES: Case[] = [
     path: '/expansions/EXPANSION/diagrams/1',
     expect: members(200),
   },
+  {
+    route: 'expansions/[id]/diagrams/[label].svg',
+    method: 'GET',
+    path: '/expansions/EXPANSION/diagrams/1.svg',
+    expect: members(200),
+  },
   { route: 'expansions/[id]/plates', method: 'GET', path: '/expansions/EXPANSION/plates', expect: members(200) },
   { route: 'expansions/[id]/ledger', method: 'GET', path: '/expansions/EXPANSION/ledger', expect: members(200) },
   { route: 'expansions/[id]/events', method: 'GET', path: '/expansions/EXPANSION/events', expect: members(200) },
@@ -196,6 +202,27 @@ describe('every route, asked by everybody', () => {
       .filter((name) => name.endsWith('.ts'))
       .map((name) => name.slice(0, -3));
     expect(new Set(CASES.map(({ route }) => route))).toEqual(new Set(routes));
+  });
+
+  it('gives a drawing as a file, and 304 to who has it', async () => {
+    const lead = clients.get('lead')!;
+    // The matrix has removed its expansion; another public one of the demo is asked.
+    const { items } = await (await lead.get('/api/v1/expansions')).json();
+    const path = `/api/v1/expansions/${items.find(({ state }: { state: string }) => state === 'complete').id}/diagrams/1`;
+    const { bare, description, symmetryFactor } = await (await lead.get(path)).json();
+    const first = await lead.get(`${path}.svg`);
+    expect(first.headers.get('content-type')).toBe('image/svg+xml; charset=utf-8');
+    expect(first.headers.get('content-disposition')).toBe(`attachment; filename="wickwork-${bare}.svg"`);
+    const text = await first.text();
+    expect(text).toMatch(/^<svg [^>]*>\n<title>/);
+    expect(text).toContain(`<desc>${description}`);
+    expect(text).toContain(
+      `symmetry factor S = ${symmetryFactor}, weight 1/S. external legs labelled; made by Wickwork `,
+    );
+    const etag = first.headers.get('etag')!;
+    expect((await lead.fetch(`${path}.svg`, { headers: { 'if-none-match': etag } })).status).toBe(304);
+    expect((await lead.fetch(path, { headers: { 'if-none-match': etag } })).status).toBe(200);
+    expect((await lead.get(`${path.slice(0, -1)}999999.svg`)).status).toBe(404);
   });
 
   it('answers 405 with the methods that work to every other one', async () => {

@@ -13,14 +13,18 @@ function tagOf(call: Call): string | null {
 
 /**
  * Answers a part of an expansion; of a complete one with an ETag, and 304 to who has it: nothing is rendered again.
- * The right to read it is checked each time.
+ * The right to read it is checked each time. `reply` writes what was made, as JSON unless told otherwise.
  */
-export function immutable(call: Call, make: () => unknown): Response {
+export function immutable<T>(
+  call: Call,
+  make: () => T,
+  reply: (made: T, status: number, headers: Record<string, string>) => Response = json,
+): Response {
   const etag = tagOf(call);
-  if (etag === null) return json(make());
+  if (etag === null) return reply(make(), 200, {});
   const headers = { etag, 'cache-control': 'private, no-cache' };
   const known = call.context.request.headers.get('if-none-match') ?? '';
   if (known.split(',').some((entry) => entry.trim().replace(/^W\//, '') === etag))
     return new Response(null, { status: 304, headers });
-  return json(make(), 200, headers);
+  return reply(make(), 200, headers);
 }
