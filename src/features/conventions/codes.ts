@@ -4,7 +4,7 @@ import type { AnyCode } from '#contract/errors.ts';
 export const CODES: Readonly<Record<AnyCode, string>> = {
   syntax: 'The Lagrangian cannot be read at the place given.',
   'unknown-name': 'A name that the model does not have.',
-  unsupported: 'Understood, but outside what the program computes: fermions, gauge fields, response fields.',
+  unsupported: 'Understood, but outside what the program computes: fermions, gauge fields, multiplets, integrals.',
   'not-hermitian': 'The Lagrangian is not real; its hermitian conjugate is missing.',
   'wrong-sign': 'A kinetic term whose sign does not fit the chosen signature.',
   'wrong-legs': 'A leg that is no field of the model, or more legs than the limit.',

@@ -13,7 +13,7 @@ export const ledgerChapter: Chapter = {
       body: [
         'No list of diagrams is shown without its proof. For every expansion a sum that is computed without generating any diagram must equal the sum over the list. It comes from the theory in zero dimensions, where every propagator is 1 and every kind of vertex is replaced by its own symbol over the factorials of its fields:',
         { display: '\\int\\!\\frac{d\\phi}{\\sqrt{2\\pi}}\\;e^{-\\phi^2/2+\\sum_k c_k\\phi^k/k!+J\\phi}' },
-        '“All” is compared with this series, “normalised” with its ratio to $J=0$, “connected” with its logarithm, “1PI” with its Legendre transform expanded at $\\phi=0$. For “all”, the numbers of contractions must also equal the number of perfect matchings of the half-lines, per content of vertices. Where a cut of the list has no closed form, the ledger says that it rests on the balanced uncut list.',
+        '“All” is compared with this series, “normalised” with its ratio to $J=0$, “connected” with its logarithm, “1PI” with its Legendre transform expanded at $\\phi=0$. Sums of weights and numbers of contractions must both agree, for each content of vertices; for “all” the contractions are the perfect matchings of the half-lines. What is dropped is taken out of the sum as well, by normal-ordered vertices, by a source that makes $\\langle\\phi\\rangle$ vanish, or by vertices whose expectation is the bare vertex. Where that sum would need too much work, the ledger says that the cut list rests on the balanced uncut list.',
         'A ledger that does not balance is a defect of the program; the expansion is then marked unusable. A ledger proves counting, not physics.',
       ],
       sources: [
@@ -27,7 +27,7 @@ export const ledgerChapter: Chapter = {
       short:
         'The account of one symmetry factor by two routes: contractions counted step by step, and the automorphism group.',
       body: [
-        'Each diagram carries the account of its factor by two routes: the contractions counted step by step, and the order of the automorphism group with its generators in words and in cycles. The whole coefficient is split into the normalisation of the coupling, $1/S$, and signs with powers of $i$, never one number.',
+        'Each diagram carries the account of its factor by two routes: the contractions counted step by step, and the order of the automorphism group with its generators in words and in cycles. Both are made apart from the search that listed the diagram, which is a third route to the same number. The whole coefficient is split into the normalisation of the coupling, $1/S$, and signs with powers of $i$, never one number.',
       ],
       sources: [
         'H. Kleinert, A. Pelster, B. Kastening, M. Bachmann, Phys. Rev. E 62 (2000) 1537, for an independent route to the weights.',
@@ -62,7 +62,7 @@ export const ledgerChapter: Chapter = {
       short:
         'A canonical name: the same diagram has the same label in every expansion, whatever the order of terms or vertices.',
       body: [
-        'The bare label of a diagram is canonical, with the names of fields and couplings forgotten; together with the table of names it is the permanent id. The same diagram has the same id in every expansion.',
+        'The bare label of a diagram is canonical, with the names of fields and couplings forgotten; it is drawn from the SHA-256 digest of the least description of the diagram over all numberings. With a digest of the names of its fields and couplings it is the permanent id: the same diagram has the same id in every expansion. Two diagrams of one list may share a bare label when only names tell them apart.',
       ],
       sources: ['A definition of this program.'],
     },
